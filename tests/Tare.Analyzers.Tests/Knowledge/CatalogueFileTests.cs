@@ -44,7 +44,7 @@ public class CatalogueFileTests
             }
         }
 
-        Assert.Empty(wrong);
+        Assert.True(wrong.Count == 0, string.Join("\n", wrong));
     }
 
     [Fact]
@@ -59,7 +59,7 @@ public class CatalogueFileTests
                 wrong.Add($"line {entry.Line + 1}: {entry}");
         }
 
-        Assert.Empty(wrong);
+        Assert.True(wrong.Count == 0, string.Join("\n", wrong));
     }
 
     [Fact]
@@ -77,7 +77,7 @@ public class CatalogueFileTests
             }
         }
 
-        Assert.Empty(missing);
+        Assert.True(missing.Count == 0, string.Join("\n", missing));
     }
 
     [Fact]
@@ -99,7 +99,7 @@ public class CatalogueFileTests
             }
         }
 
-        Assert.Empty(missing);
+        Assert.True(missing.Count == 0, string.Join("\n", missing));
         Assert.True(seen > 20);
     }
 
