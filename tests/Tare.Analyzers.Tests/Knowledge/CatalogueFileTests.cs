@@ -48,6 +48,28 @@ public class CatalogueFileTests
     }
 
     [Fact]
+    public void Every_overload_has_a_parameter_for_what_its_effect_needs()
+    {
+        // Overloads of one method may call the same thing by two names ("s" and "input"); a line must give both.
+        var wrong = new List<string>();
+        foreach (var entry in Catalogue.Embedded.Entries.Where(e => e.AllOverloads))
+        {
+            foreach (var key in CatalogueGrammar.Required(entry.Effect).Where(k => CatalogueGrammar.WordsOf(k) is null))
+            {
+                foreach (var overload in Symbols(entry).Where(s => s.DeclaredAccessibility == Accessibility.Public))
+                {
+                    if (overload is IMethodSymbol { Parameters.Length: 0 })
+                        continue;
+                    if (Catalogue.Embedded.TryGet(overload, out var found) && ReferenceEquals(found, entry) && !entry[key].Any(n => Has(overload, n)))
+                        wrong.Add($"line {entry.Line + 1}: '{overload.GetDocumentationCommentId()}' lacks a '{CatalogueGrammar.NameOf(key)}'");
+                }
+            }
+        }
+
+        Assert.True(wrong.Count == 0, string.Join("\n", wrong));
+    }
+
+    [Fact]
     public void Every_line_is_found_again_by_its_symbol()
     {
         var wrong = new List<string>();
