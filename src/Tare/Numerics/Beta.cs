@@ -2,7 +2,8 @@ namespace Tare;
 
 /// <summary>Regularised incomplete beta function, both tails and their logarithms, and its inverse.</summary>
 /// <remarks>
-/// Continued fraction (Abramowitz and Stegun 26.5.8) by Lentz's method, with the prefactor from Loader's deviance form, so that
+/// Continued fraction of DiDonato and Morris 1992 (Significant digit computation of the incomplete beta function ratios, ACM
+/// TOMS 18) by Lentz's method, with the prefactor from Loader's deviance form, so that
 /// digits survive for a and b of a million. The small tail is always computed directly.
 /// </remarks>
 internal static class Beta
@@ -26,15 +27,15 @@ internal static class Beta
         if (y <= 0)
             return new Tails(1, 0, 0, double.NegativeInfinity);
         double kernel = LogKernel(x, y, a, b);
-        if (x < (a + 1) / (a + b + 2))
+        if (a * y > b * x)
         {
-            double log = kernel - Math.Log(a) + Math.Log(Fraction(x, a, b));
+            double log = kernel - Math.Log(Fraction(x, y, a, b));
             double small = Math.Min(1, Math.Exp(log));
             return new Tails(small, 1 - small, log, Stable.Log1p(-small));
         }
         else
         {
-            double log = kernel - Math.Log(b) + Math.Log(Fraction(y, b, a));
+            double log = kernel - Math.Log(Fraction(y, x, b, a));
             double small = Math.Min(1, Math.Exp(log));
             return new Tails(1 - small, small, Stable.Log1p(-small), log);
         }
@@ -64,11 +65,13 @@ internal static class Beta
                 high = at;
             // d log tail / d log-odds = +-(x^a y^b / B) / tail.
             double slope = Math.Exp(LogKernel(x, y, a, b) - log);
-            double next = slope > 0 ? at - (useLower ? gap : -gap) / slope : double.NaN;
+            double move = slope > 0 ? (useLower ? -gap : gap) / slope : double.NaN;
+            double smallest = 1e-15 * Math.Max(1, Math.Abs(at));
+            if (Math.Abs(move) <= smallest || high - low <= smallest)
+                return at;
+            double next = at + move;
             if (!(next > low && next < high))
                 next = 0.5 * (low + high);
-            if (Math.Abs(next - at) <= 1e-15 * Math.Max(1, Math.Abs(at)) || gap == 0)
-                return next;
             at = next;
         }
 
@@ -86,29 +89,26 @@ internal static class Beta
         return t < 0 ? (small, large) : (large, small);
     }
 
-    // The fraction F in I_x(a,b) = x^a y^b / (a B(a,b)) * F.
-    private static double Fraction(double x, double a, double b)
+    // The fraction F in I_x(a,b) = x^a y^b / B(a,b) / F. The combination a*y - b*x is formed once, so that no digits are lost
+    // where x lies near the mean and a or b is large.
+    private static double Fraction(double x, double y, double a, double b)
     {
         const double tiny = 1e-300;
-        double c = 1, d = 1 - (a + b) * x / (a + 1);
-        if (Math.Abs(d) < tiny)
-            d = tiny;
-        d = 1 / d;
-        double f = d;
+        double lambda = a * y - b * x;
+        double f = a * (lambda + 1) / (a + 1);
+        if (Math.Abs(f) < tiny)
+            f = tiny;
+        double c = f, d = 0;
         for (int m = 1; m <= 1_000_000; m++)
         {
-            double even = m * (b - m) * x / ((a + 2 * m - 1) * (a + 2 * m));
-            d = 1 + even * d;
-            c = 1 + even / c;
+            double odd = a + 2.0 * m - 1;
+            double numerator = (a + m - 1) / odd * ((a + b + m - 1) / odd) * m * (b - m) * x * x;
+            double denominator = m + m * (b - m) * x / odd + (a + m) * (lambda + 1 + m * (1 + y)) / (odd + 2);
+            d = denominator + numerator * d;
+            c = denominator + numerator / c;
             d = 1 / (Math.Abs(d) < tiny ? tiny : d);
             c = Math.Abs(c) < tiny ? tiny : c;
-            f *= d * c;
-            double odd = -(a + m) * (a + b + m) * x / ((a + 2 * m) * (a + 2 * m + 1));
-            d = 1 + odd * d;
-            c = 1 + odd / c;
-            d = 1 / (Math.Abs(d) < tiny ? tiny : d);
-            c = Math.Abs(c) < tiny ? tiny : c;
-            double step = d * c;
+            double step = c * d;
             f *= step;
             if (Math.Abs(step - 1) < 2e-16)
                 break;
