@@ -32,11 +32,7 @@ public static class ProportionInterval
         Check.Level(confidence, nameof(confidence));
         double level = 1 - confidence;
         double z = Normal.UpperQuantile(side == Side.TwoSided ? 0.5 * level : level);
-        double n = rows, square = z * z, misses = n - hits;
-        double root = z * Math.Sqrt(hits * misses / n + 0.25 * square), denominator = n + square;
-        // The lower end through the product of the roots where the difference would cancel.
-        double upper = hits == rows ? 1 : Math.Min(1, (hits + 0.5 * square + root) / denominator);
-        double lower = hits == 0 ? 0 : hits / n * hits / (hits + 0.5 * square + root);
+        (double lower, double upper) = WilsonEnds(hits, rows, z);
         return new Interval(
             side == Side.Less ? 0 : lower,
             side == Side.Greater ? 1 : upper,
@@ -51,6 +47,16 @@ public static class ProportionInterval
         double lower = side == Side.Less || hits == 0 ? 0 : Beta.Quantile(tail, 1 - tail, hits, rows - hits + 1);
         double upper = side == Side.Greater || hits == rows ? 1 : Beta.Quantile(1 - tail, tail, hits + 1, rows - hits);
         return new Interval(lower, upper, 1 - level, Named("Clopper-Pearson", side));
+    }
+
+    internal static (double Lower, double Upper) WilsonEnds(double hits, double rows, double z)
+    {
+        double square = z * z, misses = rows - hits;
+        double root = z * Math.Sqrt(hits * misses / rows + 0.25 * square);
+        double upper = hits == rows ? 1 : Math.Min(1, (hits + 0.5 * square + root) / (rows + square));
+        // The lower end through the product of the two roots, where their difference would cancel.
+        double lower = hits == 0 ? 0 : hits / rows * hits / (hits + 0.5 * square + root);
+        return (lower, upper);
     }
 
     private static string Named(string method, Side side) => side switch

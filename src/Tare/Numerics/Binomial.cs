@@ -37,6 +37,8 @@ internal static class Binomial
             return 1;
         if (p == 1)
             return 0;
+        if (k == 0)
+            return Math.Exp(n * Stable.Log1p(-p));
         return Beta.Tails(p, 1 - p, k + 1, n - k).Upper;
     }
 
@@ -49,6 +51,8 @@ internal static class Binomial
             return 0;
         if (p == 1)
             return 1;
+        if (k == n)
+            return Math.Pow(p, n);
         return Beta.Tails(p, 1 - p, k, n - k + 1).Lower;
     }
 }
