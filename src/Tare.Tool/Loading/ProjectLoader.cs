@@ -1,0 +1,137 @@
+using System.Collections.Concurrent;
+using System.Collections.Immutable;
+using Microsoft.CodeAnalysis;
+using Microsoft.CodeAnalysis.MSBuild;
+
+namespace Tare.Tool.Loading;
+
+/// <summary>Loads projects and solutions the way the build reads them.</summary>
+internal static class ProjectLoader
+{
+    public static Task<LoadedCode> LoadSolutionAsync(string solution, string root, Action<string> progress, CancellationToken cancel) =>
+        LoadAsync(solution, root, null, progress, async (workspace, report) =>
+        {
+            await workspace.OpenSolutionAsync(solution, report, cancel);
+            return [.. workspace.CurrentSolution.Projects.Where(IsCSharp).Select(project => project.Id)];
+        });
+
+    public static Task<LoadedCode> LoadProjectsAsync(
+        IReadOnlyList<string> projects, string root, string? onlyFile, Action<string> progress, CancellationToken cancel) =>
+        LoadAsync(projects[0], root, onlyFile, progress, async (workspace, report) =>
+        {
+            foreach (var path in projects)
+            {
+                // It may be here already, as a reference of one before it.
+                if (!workspace.CurrentSolution.Projects.Any(project => project.FilePath == path))
+                {
+                    await workspace.OpenProjectAsync(path, report, cancel);
+                }
+            }
+
+            // A project with several targets is several projects with one path.
+            return [.. workspace.CurrentSolution.Projects.Where(project => IsCSharp(project) && projects.Contains(project.FilePath)).Select(project => project.Id)];
+        });
+
+    /// <summary>Loads the project of a file.</summary>
+    /// <returns>Null when the project does not compile the file after all.</returns>
+    public static async Task<LoadedCode?> TryLoadFileAsync(string file, string project, string root, Action<string> progress, CancellationToken cancel)
+    {
+        var code = await LoadProjectsAsync([project], root, file, progress, cancel);
+        if (code.DocumentCount > 0)
+        {
+            return code;
+        }
+
+        code.Dispose();
+        return null;
+    }
+
+    private static async Task<LoadedCode> LoadAsync(
+        string path,
+        string root,
+        string? onlyFile,
+        Action<string> progress,
+        Func<MSBuildWorkspace, IProgress<ProjectLoadProgress>, Task<ImmutableArray<ProjectId>>> open)
+    {
+        var name = Path.GetFileName(path);
+        var workspace = MSBuildWorkspace.Create();
+        try
+        {
+            workspace.SkipUnrecognizedProjects = true;
+            workspace.LoadMetadataForReferencedProjects = true;
+            var failures = new ConcurrentQueue<string>();
+            using var subscription = workspace.RegisterWorkspaceFailedHandler(failed =>
+            {
+                if (failed.Diagnostic.Kind == WorkspaceDiagnosticKind.Failure)
+                {
+                    failures.Enqueue(failed.Diagnostic.Message);
+                }
+            });
+            ImmutableArray<ProjectId> projects;
+            try
+            {
+                projects = await open(workspace, new LoadProgress(progress));
+            }
+            catch (Exception problem) when (problem is not (OperationCanceledException or ToolException))
+            {
+                throw new ToolException($"{name} does not load: {Sentence(problem.Message)}");
+            }
+
+            RequireLoaded(name, workspace.CurrentSolution, projects, failures);
+            return new LoadedCode(workspace, root, projects, onlyFile, IsLoose: false);
+        }
+        catch
+        {
+            workspace.Dispose();
+            throw;
+        }
+    }
+
+    private static void RequireLoaded(string name, Solution solution, ImmutableArray<ProjectId> projects, IReadOnlyCollection<string> failures)
+    {
+        // The SDK's own code for a missing assets file.
+        if (failures.Any(failure => failure.Contains("NETSDK1004", StringComparison.Ordinal) || failure.Contains("project.assets.json", StringComparison.Ordinal)))
+        {
+            throw new ToolException($"{name} is not restored; run `dotnet restore {name}` first.");
+        }
+
+        // Other languages are left to their own tools.
+        var failure = failures.FirstOrDefault(failure => !failure.Contains(".fsproj", StringComparison.Ordinal) && !failure.Contains(".vbproj", StringComparison.Ordinal));
+        if (failure != null)
+        {
+            throw new ToolException($"{name} does not load: {Sentence(failure)}");
+        }
+
+        if (projects.Length == 0)
+        {
+            throw new ToolException($"{name} holds no C# project.");
+        }
+
+        foreach (var project in projects.Select(id => solution.GetProject(id)!))
+        {
+            if (project.MetadataReferences.Count == 0 && !project.AllProjectReferences.Any())
+            {
+                throw new ToolException($"{project.Name} has no references, not even the base library; run `dotnet restore {name}` and see that it builds.");
+            }
+        }
+
+        if (projects.All(id => !solution.GetProject(id)!.Documents.Any()))
+        {
+            throw new ToolException($"{name} compiles no C# file.");
+        }
+    }
+
+    private static bool IsCSharp(Project project) => project.Language == LanguageNames.CSharp;
+
+    private static string Sentence(string message)
+    {
+        var line = string.Join(' ', message.Split('\n', '\r').Select(part => part.Trim()).Where(part => part.Length > 0));
+        return line.EndsWith('.') ? line : line + ".";
+    }
+
+    /// <summary>Names the project that is being read.</summary>
+    private sealed class LoadProgress(Action<string> progress) : IProgress<ProjectLoadProgress>
+    {
+        public void Report(ProjectLoadProgress value) => progress($"Loading {Path.GetFileName(value.FilePath)}");
+    }
+}
