@@ -58,7 +58,6 @@ internal static class ProjectLoader
         try
         {
             workspace.SkipUnrecognizedProjects = true;
-            workspace.LoadMetadataForReferencedProjects = true;
             var failures = new ConcurrentQueue<string>();
             using var subscription = workspace.RegisterWorkspaceFailedHandler(failed =>
             {
@@ -78,7 +77,8 @@ internal static class ProjectLoader
             }
 
             RequireLoaded(name, workspace.CurrentSolution, projects, failures);
-            return new LoadedCode(workspace, root, projects, onlyFile, IsLoose: false);
+            var code = new LoadedCode(workspace, root, projects, onlyFile, IsLoose: false);
+            return code.DocumentCount > 0 || onlyFile != null ? code : throw new ToolException($"{name} compiles no C# file.");
         }
         catch
         {
@@ -89,12 +89,6 @@ internal static class ProjectLoader
 
     private static void RequireLoaded(string name, Solution solution, ImmutableArray<ProjectId> projects, IReadOnlyCollection<string> failures)
     {
-        // The SDK's own code for a missing assets file.
-        if (failures.Any(failure => failure.Contains("NETSDK1004", StringComparison.Ordinal) || failure.Contains("project.assets.json", StringComparison.Ordinal)))
-        {
-            throw new ToolException($"{name} is not restored; run `dotnet restore {name}` first.");
-        }
-
         // Other languages are left to their own tools.
         var failure = failures.FirstOrDefault(failure => !failure.Contains(".fsproj", StringComparison.Ordinal) && !failure.Contains(".vbproj", StringComparison.Ordinal));
         if (failure != null)
@@ -109,16 +103,41 @@ internal static class ProjectLoader
 
         foreach (var project in projects.Select(id => solution.GetProject(id)!))
         {
-            if (project.MetadataReferences.Count == 0 && !project.AllProjectReferences.Any())
+            if (!IsRestored(project))
             {
-                throw new ToolException($"{project.Name} has no references, not even the base library; run `dotnet restore {name}` and see that it builds.");
+                throw new ToolException($"{Path.GetFileName(project.FilePath)} is not restored; run `dotnet restore {name}` first.");
+            }
+
+            if (project.MetadataReferences.Count == 0)
+            {
+                throw new ToolException($"{project.Name} has no references, not even the base library; see that `dotnet build {name}` works.");
             }
         }
+    }
 
-        if (projects.All(id => !solution.GetProject(id)!.Documents.Any()))
+    /// <summary>
+    /// Whether packages were resolved. Without that a project loads with the base library alone, and code that uses a package would be passed over in silence.
+    /// </summary>
+    private static bool IsRestored(Project project)
+    {
+        // Only the SDK writes the file of resolved packages; it stands in a folder above the intermediate assembly.
+        if (project.FilePath is not { } file || !File.ReadAllText(file).Contains("Sdk", StringComparison.Ordinal))
         {
-            throw new ToolException($"{name} compiles no C# file.");
+            return true;
         }
+
+        var folder = Path.GetDirectoryName(project.CompilationOutputInfo.AssemblyPath);
+        for (var level = 0; level < 5 && folder != null; level++)
+        {
+            if (File.Exists(Path.Combine(folder, "project.assets.json")))
+            {
+                return true;
+            }
+
+            folder = Path.GetDirectoryName(folder);
+        }
+
+        return File.Exists(Path.Combine(Path.GetDirectoryName(file)!, "obj", "project.assets.json"));
     }
 
     private static bool IsCSharp(Project project) => project.Language == LanguageNames.CSharp;

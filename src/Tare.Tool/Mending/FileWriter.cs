@@ -14,7 +14,7 @@ internal static class FileWriter
             foreach (var change in changes)
             {
                 // A link stays a link; its target is what is edited.
-                var target = new FileInfo(change.Path).ResolveLinkTarget(returnFinalTarget: true)?.FullName ?? change.Path;
+                var target = (change.Before == null ? null : new FileInfo(change.Path).ResolveLinkTarget(returnFinalTarget: true)?.FullName) ?? change.Path;
                 var bytes = BytesOf(change, target);
                 Directory.CreateDirectory(Path.GetDirectoryName(target)!);
                 var temporary = Path.Combine(Path.GetDirectoryName(target)!, $".{Path.GetFileName(target)}.{Guid.NewGuid():N}.tmp");

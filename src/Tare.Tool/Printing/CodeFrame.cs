@@ -22,7 +22,7 @@ internal sealed class CodeFrame(TextWriter output, Ink ink, Func<string, string>
                 output.WriteLine($"{new string(' ', gutter)} {ink.Paint(_glyphs.File, Tone.Muted)} {ink.Paint(displayPath(file.Key), Tone.Path)}");
             }
 
-            WriteFile([.. file.OrderBy(mark => mark.Place.Span.Start).ThenBy(mark => mark.Place.Span.End)], gutter, tone);
+            WriteFile([.. file.OrderBy(mark => mark.Place.Span.Start).ThenByDescending(mark => mark.Place.Span.End)], gutter, tone);
         }
     }
 
