@@ -81,6 +81,20 @@ public class CodeFrameTests
     }
 
     [Fact]
+    public void Places_behind_one_another_that_say_the_same_share_a_row()
+    {
+        var text = SourceText.From("var (testX, testY) = Load();\n\tbad\n");
+
+        Assert.Equal("""
+              1 │ var (testX, testY) = Load();
+                │      ─────  ───── test rows come from here
+              2 │     bad
+                │     ^^^ here
+
+            """, Frame([At(text, "bad", "here"), At(text, "testX", "test rows come from here"), At(text, "testY", "test rows come from here")]));
+    }
+
+    [Fact]
     public void Control_characters_do_not_reach_the_terminal() =>
         Assert.DoesNotContain('\u001b', Frame([At(SourceText.From("\"\u001b[2J\" bad"), "bad", "")]));
 

@@ -47,6 +47,30 @@ public class MendTests
         Assert.Equal(folder.Read("a.cs"), Patch.Apply(Source, shown.Output));
     }
 
+    // git is the reader that counts: `git apply` refuses a hunk that is off by one line or one character.
+    [Theory]
+    [InlineData("a.cs", "\n", true)]
+    [InlineData("with blank.cs", "\r\n", false)]
+    [InlineData("gr\u00f6\u00dfe.cs", "\n", false)]
+    public async Task Git_applies_the_printed_diff(string name, string ending, bool ended)
+    {
+        var source = (ended ? Source : Source.TrimEnd('\n')).Replace("\n", ending);
+        using var folder = new Folder().With(name, source);
+
+        var shown = await Run.InAsync(folder, "mend", name);
+        folder.With("mend.diff", shown.Output);
+        using var git = System.Diagnostics.Process.Start(new System.Diagnostics.ProcessStartInfo("git", ["-c", "core.autocrlf=false", "apply", "mend.diff"])
+        {
+            WorkingDirectory = folder.Path,
+            RedirectStandardError = true,
+        })!;
+        var error = await git.StandardError.ReadToEndAsync();
+        await git.WaitForExitAsync();
+
+        Assert.True(git.ExitCode == 0, error);
+        Assert.Equal((ended ? Mended : Mended.TrimEnd('\n')).Replace("\n", ending), folder.Read(name));
+    }
+
     // The fix puts a line in that ends with \n alone, as fixes do that are written on another system.
     [Theory]
     [InlineData(false, true)]

@@ -26,7 +26,7 @@ internal static class LooseReferences
         var packages = files.SelectMany(PackagesNamedIn).ToArray();
         return packages.Length == 0
             ? BaseLibrary.Value
-            : BaseLibrary.Value.Concat(PackageCache.Resolve(packages).Select(path => MetadataReference.CreateFromFile(path)));
+            : BaseLibrary.Value.Concat(PackageCache.Resolve(packages, PackageCache.Folder).Select(path => MetadataReference.CreateFromFile(path)));
     }
 
     /// <summary>The `#:package Id@Version` lines at the head of a file-based program.</summary>

@@ -5,15 +5,19 @@ namespace Tare.Tool.Loading;
 /// <summary>Finds the assemblies of packages that are already on this machine; nothing is downloaded.</summary>
 internal static class PackageCache
 {
+    /// <summary>Where NuGet keeps the packages of this user.</summary>
+    public static string Folder { get; } = Environment.GetEnvironmentVariable("NUGET_PACKAGES")
+        ?? Path.Combine(Environment.GetFolderPath(Environment.SpecialFolder.UserProfile), ".nuget", "packages");
+
     /// <summary>Paths of the assemblies of the packages and of what they depend on; a package that is not here is left out, and its uses do not bind.</summary>
-    public static IReadOnlyList<string> Resolve(IEnumerable<(string Id, string? Version)> packages)
+    public static IReadOnlyList<string> Resolve(IEnumerable<(string Id, string? Version)> packages, string cache)
     {
         var found = new Dictionary<string, string>(StringComparer.OrdinalIgnoreCase);
         var open = new Queue<(string Id, string? Version)>(packages);
         var seen = new HashSet<string>(StringComparer.OrdinalIgnoreCase);
         while (open.TryDequeue(out var package))
         {
-            if (!seen.Add(package.Id) || FolderOf(package.Id, package.Version) is not { } folder)
+            if (!seen.Add(package.Id) || FolderOf(cache, package.Id, package.Version) is not { } folder)
             {
                 continue;
             }
@@ -32,10 +36,8 @@ internal static class PackageCache
         return [.. found.Values];
     }
 
-    private static string? FolderOf(string id, string? version)
+    private static string? FolderOf(string cache, string id, string? version)
     {
-        var cache = Environment.GetEnvironmentVariable("NUGET_PACKAGES")
-            ?? Path.Combine(Environment.GetFolderPath(Environment.SpecialFolder.UserProfile), ".nuget", "packages");
         var folder = Path.Combine(cache, id.ToLowerInvariant());
         if (!Directory.Exists(folder))
         {

@@ -1,5 +1,7 @@
 using System.Collections.Immutable;
 using System.Globalization;
+using System.Text;
+using Microsoft.CodeAnalysis.Text;
 using Tare.Tool.Analysis;
 
 namespace Tare.Tool.Printing;
@@ -44,9 +46,9 @@ internal sealed class CodeFrame(TextWriter output, Ink ink, Func<string, string>
 
             var source = text.Lines[line.Key].ToString();
             WriteLine(source, Number(line.Key), gutter);
-            foreach (var spot in line.GroupBy(mark => mark.Place.Span))
+            foreach (var row in RowsOf(line))
             {
-                WriteMark(source, text.Lines[line.Key].Start, [.. spot], gutter, tone);
+                WriteRow(source, text.Lines[line.Key].Start, row, gutter, tone);
             }
 
             last = line.Key;
@@ -56,20 +58,52 @@ internal sealed class CodeFrame(TextWriter output, Ink ink, Func<string, string>
     private void WriteLine(string source, string number, int gutter) =>
         output.WriteLine(ink.Paint($"{number.PadLeft(gutter)} {_glyphs.Bar}", Tone.Muted) + Separated(DisplayWidth.Expand(source).TrimEnd()));
 
-    private void WriteMark(string source, int lineStart, ImmutableArray<Mark> marks, int gutter, Tone tone)
+    /// <summary>
+    /// The rows under a line: marks of one stretch share a row and join their labels; stretches behind one another that say the same
+    /// (the features and the labels of the test rows) share one too.
+    /// </summary>
+    private static List<List<Underline>> RowsOf(IEnumerable<Mark> marks)
     {
-        var span = marks[0].Place.Span;
-        var start = Math.Min(span.Start - lineStart, source.Length);
+        var rows = new List<List<Underline>>();
+        foreach (var spot in marks.GroupBy(mark => mark.Place.Span))
+        {
+            var label = string.Join(", ", spot.Select(mark => mark.Place.Label).Where(label => label.Length > 0).Distinct());
+            var underline = new Underline(spot.Key, spot.Any(mark => mark.IsOwn), label);
+            if (!underline.IsOwn && rows.LastOrDefault() is [.., { IsOwn: false } before] row && before.Label == label && before.Span.End < underline.Span.Start)
+            {
+                row.Add(underline);
+            }
+            else
+            {
+                rows.Add([underline]);
+            }
+        }
 
-        // A stretch over several lines is underlined on its first.
-        var end = Math.Clamp(span.End - lineStart, start, source.TrimEnd().Length < start ? source.Length : source.TrimEnd().Length);
-        var before = DisplayWidth.Of(source.AsSpan(0, start));
-        var width = Math.Max(1, DisplayWidth.Of(source.AsSpan(start, end - start), before));
-        var own = marks.Any(mark => mark.IsOwn);
-        var labels = string.Join(", ", marks.Select(mark => mark.Place.Label).Where(label => label.Length > 0).Distinct());
-        var underline = new string(own ? '^' : _glyphs.Line, width);
-        var mark = ink.Paint(labels.Length > 0 ? $"{underline} {labels}" : underline, own ? tone : Tone.Path);
-        output.WriteLine($"{ink.Paint($"{new string(' ', gutter)} {_glyphs.Bar}", Tone.Muted)} {new string(' ', before)}{mark}");
+        return rows;
+    }
+
+    private void WriteRow(string source, int lineStart, List<Underline> underlines, int gutter, Tone tone)
+    {
+        var row = new StringBuilder();
+        var cell = 0;
+        var length = source.TrimEnd().Length;
+        foreach (var underline in underlines)
+        {
+            var start = Math.Min(underline.Span.Start - lineStart, source.Length);
+
+            // A stretch over several lines is underlined on its first.
+            var end = Math.Clamp(underline.Span.End - lineStart, start, Math.Max(start, length));
+            var before = DisplayWidth.Of(source.AsSpan(0, start));
+            var width = Math.Max(1, DisplayWidth.Of(source.AsSpan(start, end - start), before));
+            row.Append(' ', before - cell).Append(underline.IsOwn ? '^' : _glyphs.Line, width);
+            cell = before + width;
+        }
+
+        var marks = row.ToString().TrimStart();
+        var label = underlines[0].Label.Length > 0 ? " " + underlines[0].Label : "";
+        output.WriteLine(ink.Paint($"{new string(' ', gutter)} {_glyphs.Bar}", Tone.Muted)
+            + new string(' ', 1 + row.Length - marks.Length)
+            + ink.Paint(marks + label, underlines[0].IsOwn ? tone : Tone.Path));
     }
 
     private static string Separated(string source) => source.Length == 0 ? "" : " " + source;
@@ -77,4 +111,6 @@ internal sealed class CodeFrame(TextWriter output, Ink ink, Func<string, string>
     private static string Number(int line) => (line + 1).ToString(CultureInfo.InvariantCulture);
 
     private sealed record Mark(Place Place, bool IsOwn);
+
+    private sealed record Underline(TextSpan Span, bool IsOwn, string Label);
 }
