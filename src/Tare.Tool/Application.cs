@@ -41,6 +41,12 @@ internal sealed class Application(RulePack rules, Surroundings surroundings)
             await error.WriteLineAsync("tare: stopped before the end; nothing was written.");
             return ExitCode.Failed;
         }
+        catch (Exception fault)
+        {
+            // Unknown is not clean: without this the runtime would abort with a code of its own.
+            await error.WriteLineAsync($"tare: a fault of the tool itself, please report it: {fault}");
+            return ExitCode.Failed;
+        }
     }
 
     private static string OneLine(string message) => string.Join(' ', message.Split('\n', StringSplitOptions.TrimEntries | StringSplitOptions.RemoveEmptyEntries)).TrimEnd('.');

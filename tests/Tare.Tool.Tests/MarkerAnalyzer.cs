@@ -8,7 +8,7 @@ namespace Tare.Tool.Tests;
 
 /// <summary>
 /// Reports local variables by their names, with the fields called `origin…` as the place their rows come from:
-/// `bad…` (warning, can be mended), `stuck…` (warning, cannot), `hint…` (info, cannot), `trap…` (warning, the fix does not compile).
+/// `bad…` (warning, can be mended), `stuck…` (warning, cannot), `hint…` (info, cannot), `trap…` (warning, the fix does not compile), `bomb…` (warning, the fix throws).
 /// In an additional file every line that begins with `stuck` is reported.
 /// </summary>
 #pragma warning disable RS1036, RS1038, RS1041, RS2008 // Rules about shipping an analyzer; this one is for tests.
@@ -20,7 +20,9 @@ public sealed class MarkerAnalyzer : DiagnosticAnalyzer
     public static readonly DiagnosticDescriptor Hint = Rule("TEST003", DiagnosticSeverity.Info);
     public static readonly DiagnosticDescriptor Trap = Rule("TEST004", DiagnosticSeverity.Warning);
 
-    public override ImmutableArray<DiagnosticDescriptor> SupportedDiagnostics => [Bad, Stuck, Hint, Trap];
+    public static readonly DiagnosticDescriptor Bomb = Rule("TEST005", DiagnosticSeverity.Warning);
+
+    public override ImmutableArray<DiagnosticDescriptor> SupportedDiagnostics => [Bad, Stuck, Hint, Trap, Bomb];
 
     public override void Initialize(AnalysisContext context)
     {
@@ -39,7 +41,7 @@ public sealed class MarkerAnalyzer : DiagnosticAnalyzer
             throw new InvalidOperationException("marker crash");
         }
 
-        var rule = new[] { ("bad", Bad), ("stuck", Stuck), ("hint", Hint), ("trap", Trap) }
+        var rule = new[] { ("bad", Bad), ("stuck", Stuck), ("hint", Hint), ("trap", Trap), ("bomb", Bomb) }
             .FirstOrDefault(entry => name.StartsWith(entry.Item1, StringComparison.Ordinal)).Item2;
         if (rule == null)
         {

@@ -11,7 +11,7 @@ namespace Tare.Tool.Tests;
 [ExportCodeFixProvider(LanguageNames.CSharp)]
 public sealed class MarkerFix : CodeFixProvider
 {
-    public override ImmutableArray<string> FixableDiagnosticIds => ["TEST001", "TEST004"];
+    public override ImmutableArray<string> FixableDiagnosticIds => ["TEST001", "TEST004", "TEST005"];
 
     public override FixAllProvider GetFixAllProvider() => WellKnownFixAllProviders.BatchFixer;
 
@@ -27,6 +27,11 @@ public sealed class MarkerFix : CodeFixProvider
     {
         var root = (await document.GetSyntaxRootAsync(cancel))!;
         var old = root.FindToken(diagnostic.Location.SourceSpan.Start);
+        if (old.Text.StartsWith("bomb", StringComparison.Ordinal))
+        {
+            throw new InvalidOperationException("marker bomb");
+        }
+
         var isTrap = old.Text.StartsWith("trap", StringComparison.Ordinal);
         var name = isTrap ? "x" + old.Text : "good" + old.Text[3..];
         var uses = root.DescendantTokens().Where(token => token.IsKind(SyntaxKind.IdentifierToken) && token.Text == old.Text && (!isTrap || token == old));

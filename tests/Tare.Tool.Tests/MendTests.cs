@@ -153,6 +153,18 @@ public class MendTests
     }
 
     [Fact]
+    public async Task A_fix_that_throws_is_told_and_the_others_are_applied()
+    {
+        using var folder = new Folder().With("a.cs", "int bomb = 1;\nint bad = 1;\n");
+
+        var run = await Run.InAsync(folder, "mend", "a.cs", "--write");
+
+        Assert.Equal(1, run.Exit);
+        Assert.Equal("int bomb = 1;\n// mended\nint good = 1;\n", folder.Read("a.cs"));
+        Assert.Contains("a fix of TEST005 was left out because it failed (", run.Error);
+    }
+
+    [Fact]
     public async Task A_rule_filter_leaves_other_rules_alone()
     {
         using var folder = new Folder().With("a.cs", "int bad = 1;\nint trap = 1;\n");

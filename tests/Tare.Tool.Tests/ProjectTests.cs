@@ -123,6 +123,19 @@ public class ProjectTests
         Assert.False(File.Exists(folder["out.sarif"]));
     }
 
+    [Fact]
+    public async Task The_restore_it_asks_for_can_be_copied_from_where_the_user_stands()
+    {
+        using var folder = new Folder()
+            .With("sub/one/one.csproj", Projects.Library("net10.0")).With("sub/one/a.cs", Source)
+            .With("sub/two/two.csproj", Projects.Library("net10.0")).With("sub/two/b.cs", Source)
+            .Restored("sub/one/one.csproj");
+
+        var run = await Run.InAsync(folder, "inspect", "sub");
+
+        Assert.Equal("tare: sub/two/two.csproj is not restored; run `dotnet restore sub/two/two.csproj` first.\n", run.Error);
+    }
+
     [Theory]
     [InlineData("<Project Sdk=\"Microsoft.NET.Sdk\"><oops></Project>")]
     [InlineData("<Project Sdk=\"No.Such.Sdk\"></Project>")]

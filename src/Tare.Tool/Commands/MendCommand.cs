@@ -33,9 +33,9 @@ internal sealed class MendCommand(RulePack rules, Surroundings surroundings)
             }
         }
 
-        foreach (var rule in result.Refused)
+        foreach (var refusal in result.Refused)
         {
-            await error.WriteLineAsync($"tare: a fix of {rule} was left out because the code would no longer compile.");
+            await error.WriteLineAsync($"tare: a fix of {refusal.Rule} was left out {refusal.Reason}.");
         }
 
         // Colour follows standard output, which these lines do not go to.

@@ -68,7 +68,7 @@ internal static class LooseLoader
             nullableContextOptions: NullableContextOptions.Enable);
         solution = solution.AddProject(ProjectInfo.Create(
             id, VersionStamp.Default, name, name, LanguageNames.CSharp,
-            compilationOptions: options, parseOptions: Parsing, metadataReferences: LooseReferences.For(sources.Select(source => source.Root))));
+            compilationOptions: options, parseOptions: Parsing, metadataReferences: LooseReferences.For([.. sources.Select(source => source.Root)])));
         foreach (var source in sources)
         {
             solution = solution.AddDocument(DocumentId.CreateNewId(id), Path.GetFileName(source.Path), source.Text, filePath: source.Path);

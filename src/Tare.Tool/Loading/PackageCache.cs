@@ -36,6 +36,8 @@ internal static class PackageCache
         return [.. found.Values];
     }
 
+    public static bool Holds(string id, string cache) => Directory.Exists(Path.Combine(cache, id.ToLowerInvariant()));
+
     private static string? FolderOf(string cache, string id, string? version)
     {
         var folder = Path.Combine(cache, id.ToLowerInvariant());

@@ -2,22 +2,23 @@ using System.Collections.Concurrent;
 using System.Collections.Immutable;
 using Microsoft.CodeAnalysis;
 using Microsoft.CodeAnalysis.MSBuild;
+using Tare.Tool.Printing;
 
 namespace Tare.Tool.Loading;
 
 /// <summary>Loads projects and solutions the way the build reads them.</summary>
 internal static class ProjectLoader
 {
-    public static Task<LoadedCode> LoadSolutionAsync(string solution, string root, Action<string> progress, CancellationToken cancel) =>
-        LoadAsync(solution, root, null, progress, async (workspace, report) =>
+    public static Task<LoadedCode> LoadSolutionAsync(string solution, string root, string workingDirectory, Action<string> progress, CancellationToken cancel) =>
+        LoadAsync(solution, root, null, workingDirectory, progress, async (workspace, report) =>
         {
             await workspace.OpenSolutionAsync(solution, report, cancel);
             return [.. workspace.CurrentSolution.Projects.Where(IsCSharp).Select(project => project.Id)];
         });
 
     public static Task<LoadedCode> LoadProjectsAsync(
-        IReadOnlyList<string> projects, string root, string? onlyFile, Action<string> progress, CancellationToken cancel) =>
-        LoadAsync(projects[0], root, onlyFile, progress, async (workspace, report) =>
+        IReadOnlyList<string> projects, string root, string? onlyFile, string workingDirectory, Action<string> progress, CancellationToken cancel) =>
+        LoadAsync(projects[0], root, onlyFile, workingDirectory, progress, async (workspace, report) =>
         {
             foreach (var path in projects)
             {
@@ -34,9 +35,10 @@ internal static class ProjectLoader
 
     /// <summary>Loads the project of a file.</summary>
     /// <returns>Null when the project does not compile the file after all.</returns>
-    public static async Task<LoadedCode?> TryLoadFileAsync(string file, string project, string root, Action<string> progress, CancellationToken cancel)
+    public static async Task<LoadedCode?> TryLoadFileAsync(
+        string file, string project, string root, string workingDirectory, Action<string> progress, CancellationToken cancel)
     {
-        var code = await LoadProjectsAsync([project], root, file, progress, cancel);
+        var code = await LoadProjectsAsync([project], root, file, workingDirectory, progress, cancel);
         if (code.DocumentCount > 0)
         {
             return code;
@@ -50,10 +52,12 @@ internal static class ProjectLoader
         string path,
         string root,
         string? onlyFile,
+        string workingDirectory,
         Action<string> progress,
         Func<MSBuildWorkspace, IProgress<ProjectLoadProgress>, Task<ImmutableArray<ProjectId>>> open)
     {
-        var name = Path.GetFileName(path);
+        // As the user would type it, so that a command in a message can be copied.
+        var name = DisplayPath.From(workingDirectory, path);
         var workspace = MSBuildWorkspace.Create();
         try
         {
@@ -76,7 +80,7 @@ internal static class ProjectLoader
                 throw new ToolException($"{name} does not load: {Sentence(problem.Message)}");
             }
 
-            RequireLoaded(name, workspace.CurrentSolution, projects, failures);
+            RequireLoaded(name, workingDirectory, workspace.CurrentSolution, projects, failures);
             var code = new LoadedCode(workspace, root, projects, onlyFile, IsLoose: false);
             return code.DocumentCount > 0 || onlyFile != null ? code : throw new ToolException($"{name} compiles no C# file.");
         }
@@ -87,7 +91,8 @@ internal static class ProjectLoader
         }
     }
 
-    private static void RequireLoaded(string name, Solution solution, ImmutableArray<ProjectId> projects, IReadOnlyCollection<string> failures)
+    private static void RequireLoaded(
+        string name, string workingDirectory, Solution solution, ImmutableArray<ProjectId> projects, IReadOnlyCollection<string> failures)
     {
         // Other languages are left to their own tools.
         var failure = failures.FirstOrDefault(failure => !failure.Contains(".fsproj", StringComparison.Ordinal) && !failure.Contains(".vbproj", StringComparison.Ordinal));
@@ -105,7 +110,8 @@ internal static class ProjectLoader
         {
             if (!IsRestored(project))
             {
-                throw new ToolException($"{Path.GetFileName(project.FilePath)} is not restored; run `dotnet restore {name}` first.");
+                var own = DisplayPath.From(workingDirectory, project.FilePath!);
+                throw new ToolException($"{own} is not restored; run `dotnet restore {(projects.Length > 1 && name.EndsWith(".csproj", StringComparison.Ordinal) ? own : name)}` first.");
             }
 
             if (project.MetadataReferences.Count == 0)

@@ -7,7 +7,7 @@ namespace Tare.Tool.Mending;
 /// <param name="Changes">By path.</param>
 /// <param name="Found">Findings before.</param>
 /// <param name="Left">Findings after.</param>
-/// <param name="Refused">Fixes that were taken back because the code no longer compiled, each in a few words.</param>
+/// <param name="Refused">Fixes that were not applied; their findings are among those left.</param>
 /// <param name="First">The analysis before any fix.</param>
 internal sealed record MendResult(
-    ImmutableArray<FileChange> Changes, int Found, ImmutableArray<Finding> Left, ImmutableArray<string> Refused, Inspection First);
+    ImmutableArray<FileChange> Changes, int Found, ImmutableArray<Finding> Left, ImmutableArray<Refusal> Refused, Inspection First);

@@ -24,6 +24,7 @@ internal sealed class Mender(RulePack rules)
         var left = found;
         var errors = first.CompileErrors;
         var refused = new HashSet<(CodeFixProvider Provider, string Rule, string? Key)>();
+        var refusals = new HashSet<Refusal>();
         var changed = true;
         for (var round = 0; round < MaxRounds && changed && left.Length > 0; round++)
         {
@@ -33,21 +34,36 @@ internal sealed class Mender(RulePack rules)
                 foreach (var rule in provider.FixableDiagnosticIds)
                 {
                     progress($"Mending {rule}");
-                    foreach (var group in await ProposalsAsync(provider, rule, left, solution, cancel))
+                    foreach (var group in await ProposalsAsync(provider, rule, left, solution, refusals, cancel))
                     {
-                        if (refused.Contains((provider, rule, group.Key)) || await ApplyAsync(provider, rule, group, solution, cancel) is not { } next)
+                        if (refused.Contains((provider, rule, group.Key)))
                         {
                             continue;
                         }
 
-                        var after = await _inspector.InspectAsync(code, next, progress, cancel);
-                        if (after.CompileErrors > errors)
+                        var (next, refusal) = await ApplyAsync(provider, rule, group, solution, cancel);
+                        Inspection? after = null;
+                        if (next != null)
+                        {
+                            after = await _inspector.InspectAsync(code, next, progress, cancel);
+                            if (after.CompileErrors > errors)
+                            {
+                                refusal = new Refusal(rule, "because the code would no longer compile");
+                            }
+                        }
+
+                        if (refusal != null)
                         {
                             refused.Add((provider, rule, group.Key));
+                            refusals.Add(refusal);
+                        }
+
+                        if (next == null || refusal != null)
+                        {
                             continue;
                         }
 
-                        (solution, errors, changed) = (next, after.CompileErrors, true);
+                        (solution, errors, changed) = (next, after!.CompileErrors, true);
                         left = [.. after.Findings.Where(wanted)];
 
                         // The other groups speak of trees that are gone; the next round makes them anew.
@@ -61,40 +77,57 @@ internal sealed class Mender(RulePack rules)
             await ChangesAsync(code.Solution, solution, cancel),
             found.Length,
             [.. left],
-            [.. refused.Select(entry => entry.Rule).Distinct().Order(StringComparer.Ordinal)],
+            [.. refusals.OrderBy(refusal => refusal.Rule, StringComparer.Ordinal).ThenBy(refusal => refusal.Reason, StringComparer.Ordinal)],
             first);
     }
 
     /// <summary>The first action for each finding, by what kind of action it is.</summary>
     private static async Task<IReadOnlyList<IGrouping<string?, Proposal>>> ProposalsAsync(
-        CodeFixProvider provider, string rule, IEnumerable<Finding> findings, Solution solution, CancellationToken cancel)
+        CodeFixProvider provider, string rule, IEnumerable<Finding> findings, Solution solution, HashSet<Refusal> refusals, CancellationToken cancel)
     {
         var proposals = new List<Proposal>();
         foreach (var finding in findings.Where(finding => finding.Id == rule))
         {
-            if (await Proposal.OfAsync(provider, finding.Diagnostic, solution, cancel) is { } proposal)
+            try
             {
-                proposals.Add(proposal);
+                if (await Proposal.OfAsync(provider, finding.Diagnostic, solution, cancel) is { } proposal)
+                {
+                    proposals.Add(proposal);
+                }
+            }
+            catch (Exception fault) when (fault is not OperationCanceledException)
+            {
+                refusals.Add(Failed(rule, fault));
             }
         }
 
         return [.. proposals.GroupBy(proposal => proposal.Action.EquivalenceKey)];
     }
 
-    private static async Task<Solution?> ApplyAsync(
+    private static async Task<(Solution? Next, Refusal? Refusal)> ApplyAsync(
         CodeFixProvider provider, string rule, IGrouping<string?, Proposal> group, Solution solution, CancellationToken cancel)
     {
-        var context = new FixAllContext(
-            group.First().Document, provider, FixAllScope.Solution, group.Key!, [rule], new KnownDiagnostics(group), cancel);
-        if (await provider.GetFixAllProvider()!.GetFixAsync(context) is not { } action
-            || await Proposal.OutcomeOf(action, cancel) is not { } outcome)
+        try
         {
-            return null;
-        }
+            var context = new FixAllContext(
+                group.First().Document, provider, FixAllScope.Solution, group.Key!, [rule], new KnownDiagnostics(group), cancel);
+            if (await provider.GetFixAllProvider()!.GetFixAsync(context) is not { } action
+                || await Proposal.OutcomeOf(action, cancel) is not { } outcome)
+            {
+                return default;
+            }
 
-        var next = await ShareAsync(solution, outcome, cancel);
-        return next == solution ? null : next;
+            var next = await ShareAsync(solution, outcome, cancel);
+            return (next == solution ? null : next, null);
+        }
+        catch (Exception fault) when (fault is not OperationCanceledException)
+        {
+            return (null, Failed(rule, fault));
+        }
     }
+
+    private static Refusal Failed(string rule, Exception fault) =>
+        new(rule, $"because it failed ({fault.GetType().Name}: {fault.Message.Split('\n', 2)[0].TrimEnd()})");
 
     /// <summary>Takes over what a fix changed, once a file: every project that compiles the file gets the same text, and generated files stay.</summary>
     private static async Task<Solution> ShareAsync(Solution before, Solution after, CancellationToken cancel)
