@@ -8,7 +8,8 @@ namespace Tare.Tool.Tests;
 
 /// <summary>
 /// Reports local variables by their names, with the fields called `origin…` as the place their rows come from:
-/// `bad…` (warning, can be mended), `stuck…` (warning, cannot), `hint…` (info, cannot), `trap…` (warning, the fix does not compile), `bomb…` (warning, the fix throws).
+/// `bad…` (warning, can be mended), `stuck…` (warning, cannot), `hint…` (info, cannot), `trap…` (warning, the fix does not compile), `bomb…` (warning, the fix throws),
+/// `again…` (warning, the fix brings the finding back), `extra…` (warning, the fix adds a file).
 /// In an additional file every line that begins with `stuck` is reported.
 /// </summary>
 #pragma warning disable RS1036, RS1038, RS1041, RS2008 // Rules about shipping an analyzer; this one is for tests.
@@ -19,10 +20,11 @@ public sealed class MarkerAnalyzer : DiagnosticAnalyzer
     public static readonly DiagnosticDescriptor Stuck = Rule("TEST002", DiagnosticSeverity.Warning);
     public static readonly DiagnosticDescriptor Hint = Rule("TEST003", DiagnosticSeverity.Info);
     public static readonly DiagnosticDescriptor Trap = Rule("TEST004", DiagnosticSeverity.Warning);
-
     public static readonly DiagnosticDescriptor Bomb = Rule("TEST005", DiagnosticSeverity.Warning);
+    public static readonly DiagnosticDescriptor Again = Rule("TEST006", DiagnosticSeverity.Warning);
+    public static readonly DiagnosticDescriptor Extra = Rule("TEST007", DiagnosticSeverity.Warning);
 
-    public override ImmutableArray<DiagnosticDescriptor> SupportedDiagnostics => [Bad, Stuck, Hint, Trap, Bomb];
+    public override ImmutableArray<DiagnosticDescriptor> SupportedDiagnostics => [Bad, Stuck, Hint, Trap, Bomb, Again, Extra];
 
     public override void Initialize(AnalysisContext context)
     {
@@ -41,7 +43,7 @@ public sealed class MarkerAnalyzer : DiagnosticAnalyzer
             throw new InvalidOperationException("marker crash");
         }
 
-        var rule = new[] { ("bad", Bad), ("stuck", Stuck), ("hint", Hint), ("trap", Trap), ("bomb", Bomb) }
+        var rule = new[] { ("bad", Bad), ("stuck", Stuck), ("hint", Hint), ("trap", Trap), ("bomb", Bomb), ("again", Again), ("extra", Extra) }
             .FirstOrDefault(entry => name.StartsWith(entry.Item1, StringComparison.Ordinal)).Item2;
         if (rule == null)
         {

@@ -7,11 +7,13 @@ using Microsoft.CodeAnalysis.CSharp.Syntax;
 
 namespace Tare.Tool.Tests;
 
-/// <summary>Renames `bad…` to `good…`, in a new line of its own with a Unix ending; renames `trap…` only where it is declared.</summary>
+/// <summary>
+/// Renames `bad…` to `good…`, below a comment of its own with a Unix ending; renames `trap…` only where it is declared; puts an `again` before `again…`.
+/// </summary>
 [ExportCodeFixProvider(LanguageNames.CSharp)]
 public sealed class MarkerFix : CodeFixProvider
 {
-    public override ImmutableArray<string> FixableDiagnosticIds => ["TEST001", "TEST004", "TEST005"];
+    public override ImmutableArray<string> FixableDiagnosticIds => ["TEST001", "TEST004", "TEST005", "TEST006"];
 
     public override FixAllProvider GetFixAllProvider() => WellKnownFixAllProviders.BatchFixer;
 
@@ -33,10 +35,11 @@ public sealed class MarkerFix : CodeFixProvider
         }
 
         var isTrap = old.Text.StartsWith("trap", StringComparison.Ordinal);
-        var name = isTrap ? "x" + old.Text : "good" + old.Text[3..];
+        var isAgain = old.Text.StartsWith("again", StringComparison.Ordinal);
+        var name = isTrap ? "x" + old.Text : isAgain ? "again" + old.Text : "good" + old.Text[3..];
         var uses = root.DescendantTokens().Where(token => token.IsKind(SyntaxKind.IdentifierToken) && token.Text == old.Text && (!isTrap || token == old));
         root = root.ReplaceTokens(uses, (token, _) => SyntaxFactory.Identifier(token.LeadingTrivia, name, token.TrailingTrivia));
-        if (!isTrap)
+        if (!isTrap && !isAgain)
         {
             var statement = root.FindToken(old.SpanStart).Parent!.FirstAncestorOrSelf<StatementSyntax>()!;
             var trivia = statement.GetLeadingTrivia();

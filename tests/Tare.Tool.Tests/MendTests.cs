@@ -165,6 +165,18 @@ public class MendTests
     }
 
     [Fact]
+    public async Task A_fix_that_brings_its_finding_back_comes_to_an_end()
+    {
+        using var folder = new Folder().With("a.cs", "int again = 1;\n");
+
+        var run = await Run.InAsync(folder, "mend", "a.cs", "--write");
+
+        Assert.Equal(1, run.Exit);
+        Assert.Equal("int again" + string.Concat(Enumerable.Repeat("again", 10)) + " = 1;\n", folder.Read("a.cs"));
+        Assert.Contains("mended 0 of 1 finding in 1 file; 1 left to mend by hand", run.Error);
+    }
+
+    [Fact]
     public async Task A_rule_filter_leaves_other_rules_alone()
     {
         using var folder = new Folder().With("a.cs", "int bad = 1;\nint trap = 1;\n");

@@ -37,6 +37,31 @@ public class ProjectTests
     }
 
     [Fact]
+    public async Task A_file_that_a_fix_adds_belongs_to_every_target()
+    {
+        using var folder = new Folder()
+            .With("src/p.csproj", Projects.Library("net10.0;netstandard2.0")).With("src/a.cs", "class A { void M() { int extra; } }\n").Restored("src/p.csproj");
+
+        var shown = await Run.InAsync(folder, "mend", "src");
+        var written = await Run.InAsync(folder, "mend", "src", "--write");
+
+        Assert.Equal("""
+            --- /dev/null
+            +++ b/src/Added.cs
+            @@ -0,0 +1 @@
+            +static class Added { public const int One = 1; }
+            --- a/src/a.cs
+            +++ b/src/a.cs
+            @@ -1 +1 @@
+            -class A { void M() { int extra; } }
+            +class A { void M() { int plain = Added.One; } }
+
+            """, shown.Output);
+        Assert.Equal("mended src/Added.cs\nmended src/a.cs\n", written.Output);
+        Assert.Equal("static class Added { public const int One = 1; }\n", folder.Read("src/Added.cs"));
+    }
+
+    [Fact]
     public async Task Settings_and_additional_files_of_a_project_reach_the_analyzer()
     {
         using var folder = new Folder()

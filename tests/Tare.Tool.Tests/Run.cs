@@ -6,7 +6,7 @@ namespace Tare.Tool.Tests;
 /// <summary>What a run of the tool gave.</summary>
 public sealed record Run(int Exit, string Output, string Error)
 {
-    private static readonly RulePack Markers = new([new MarkerAnalyzer()], [new MarkerFix()]);
+    private static readonly RulePack Markers = new([new MarkerAnalyzer()], [new MarkerFix(), new MarkerFileFix()]);
 
     /// <summary>Runs the tool with the marker rules, standing in the folder.</summary>
     public static Task<Run> InAsync(Folder folder, params string[] args) => InAsync(Markers, folder, args);

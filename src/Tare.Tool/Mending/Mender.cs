@@ -156,9 +156,16 @@ internal sealed class Mender(RulePack rules)
             {
                 var added = after.GetDocument(id)!;
                 var path = added.FilePath ?? PathOf(added);
-                if (taken.Add(path))
+                if (!taken.Add(path))
                 {
-                    next = next.AddDocument(id, added.Name, await added.GetTextAsync(cancel), added.Folders, path);
+                    continue;
+                }
+
+                // Every target of the project compiles the file, as the build will.
+                foreach (var target in before.Projects.Where(target => target.Id == added.Project.Id || (target.FilePath != null && target.FilePath == added.Project.FilePath)))
+                {
+                    next = next.AddDocument(
+                        DocumentId.CreateNewId(target.Id), added.Name, await added.GetTextAsync(cancel), added.Folders, path);
                 }
             }
         }
