@@ -30,6 +30,17 @@ public class FileWriterTests
     }
 
     [Fact]
+    public void Bytes_that_are_no_text_are_not_rewritten()
+    {
+        using var folder = new Folder().With("a.cs", [(byte)'a', 0xE9, (byte)'b']);
+
+        var problem = Assert.Throws<ToolException>(() => FileWriter.WriteAll([new(folder["a.cs"], "a\ufffdb", "c\ufffdb", new UTF8Encoding(false))]));
+
+        Assert.Contains("a.cs holds bytes that are no text", problem.Message);
+        Assert.Equal([(byte)'a', 0xE9, (byte)'b'], File.ReadAllBytes(folder["a.cs"]));
+    }
+
+    [Fact]
     public void A_new_file_is_written_in_a_new_folder()
     {
         using var folder = new Folder();

@@ -102,6 +102,30 @@ public class MendTests
     }
 
     [Fact]
+    public async Task Latin1_stays_latin1()
+    {
+        using var folder = new Folder().With("a.cs", Encoding.Latin1.GetBytes("// caf\u00e9\n" + Source));
+
+        var run = await Run.InAsync(folder, "mend", ".", "--write");
+
+        Assert.Equal("mended a.cs\n", run.Output);
+        Assert.Equal(Encoding.Latin1.GetBytes("// caf\u00e9\n" + Mended), File.ReadAllBytes(folder["a.cs"]));
+    }
+
+    // A project's files are decoded by the build's own loader, which puts marks for bytes it cannot read.
+    [Fact]
+    public async Task A_file_of_a_project_that_is_no_utf8_is_not_rewritten()
+    {
+        var bytes = Encoding.Latin1.GetBytes("// caf\u00e9\n" + Source);
+        using var folder = new Folder().With("a.cs", bytes).With("p.csproj", Projects.Library("net10.0")).Restored("p.csproj");
+
+        var run = await Run.InAsync(folder, "mend", ".", "--write");
+
+        Assert.True(run.Exit == 2 ? run.Error.Contains("save it as UTF-8 first") : run.Output == "mended a.cs\n", run.Error);
+        Assert.StartsWith("// caf\u00e9\n", Encoding.Latin1.GetString(File.ReadAllBytes(folder["a.cs"])));
+    }
+
+    [Fact]
     public async Task A_file_that_mixes_line_endings_keeps_them_in_lines_the_fix_leaves_alone()
     {
         using var folder = new Folder().With("a.cs", "class A\r\n{\n    void M()\r\n    {\n        int bad = 1;\r\n    }\n}\n");

@@ -18,7 +18,7 @@ internal sealed class RulePack(ImmutableArray<DiagnosticAnalyzer> analyzers, Imm
     public ImmutableArray<DiagnosticDescriptor> Descriptors { get; } =
         [.. analyzers.SelectMany(analyzer => analyzer.SupportedDiagnostics).DistinctBy(rule => rule.Id).OrderBy(rule => rule.Id, StringComparer.Ordinal)];
 
-    public ImmutableSortedSet<string> Ids => [.. Descriptors.Select(rule => rule.Id)];
+    public ImmutableArray<string> Ids => [.. Descriptors.Select(rule => rule.Id)];
 
     /// <summary>The analyzer and every fix that editors load too.</summary>
     public static RulePack Shipped() => new([new TareAnalyzer()], FixesOf(Assembly.Load("Tare.CodeFixes")));

@@ -103,9 +103,17 @@ internal static class LooseLoader
     {
         try
         {
-            // Without a byte order mark a file is UTF-8; with one it is what the mark says.
-            using var stream = File.OpenRead(file);
-            return SourceText.From(stream, new UTF8Encoding(encoderShouldEmitUTF8Identifier: false));
+            var bytes = File.ReadAllBytes(file);
+            try
+            {
+                // Without a byte order mark a file is UTF-8; with one it is what the mark says.
+                return SourceText.From(new MemoryStream(bytes), new UTF8Encoding(encoderShouldEmitUTF8Identifier: false, throwOnInvalidBytes: true));
+            }
+            catch (DecoderFallbackException)
+            {
+                // An old file; every byte is a character of Latin-1, so that it is written back as it was.
+                return SourceText.From(new MemoryStream(bytes), Encoding.Latin1);
+            }
         }
         catch (Exception problem) when (problem is IOException or UnauthorizedAccessException)
         {

@@ -54,9 +54,16 @@ internal static class FileWriter
 
         var old = File.ReadAllBytes(target);
         var (mark, encoding) = MarkOf(old) is { } marked ? marked : ([], WithoutMark(change.Encoding));
-        if (encoding.GetString(old.AsSpan(mark.Length)) != change.Before)
+        var text = encoding.GetString(old.AsSpan(mark.Length));
+        if (text != change.Before)
         {
             throw new ToolException($"{name} changed while it was read; run the command again.");
+        }
+
+        // Bytes that are no text in this encoding would come back as question marks.
+        if (!old.AsSpan(mark.Length).SequenceEqual(encoding.GetBytes(text)))
+        {
+            throw new ToolException($"{name} holds bytes that are no text; save it as UTF-8 first.");
         }
 
         var bytes = encoding.GetBytes(change.After);
