@@ -15,7 +15,7 @@ public class InfrastructureTests
         var labels = Label.In("p.cs", Text);
         Assert.Equal(
             [new("TARE101", "p.cs", 1, true), new("TARE101", "p.cs", 2, true), new("TARE102", "p.cs", 2, true), new Label("TARE106", "p.cs", 3, false)],
-            labels);
+            labels.AsEnumerable());
     }
 
     [Fact]
