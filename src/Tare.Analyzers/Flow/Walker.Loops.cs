@@ -133,6 +133,7 @@ internal sealed partial class Walker
     {
         if (value.IsEmpty)
             return value;
+        rows = WithAncestors(rows);
         var tags = rows.IsEmpty ? value.Tags : Tag.Move(value.Tags, Level.Element, Level.Aggregate, rows.Contains);
         var sites = value.Sites;
         if (!tags.Equals(value.Tags))
@@ -148,6 +149,20 @@ internal sealed partial class Walker
         if (tags.Equals(value.Tags) && varies.Equals(value.Varies) && indexed.Equals(value.Indexed) && fields is null)
             return value;
         return value.With(tags: tags, varies: varies, indexed: indexed, sites: sites, fields: fields);
+    }
+
+    /// <summary>Going through a part goes through rows of all that it is a part of, and of what its indices point at.</summary>
+    private IdSet WithAncestors(IdSet rows)
+    {
+        var all = rows;
+        foreach (int id in rows)
+        {
+            all = all.Union(_facts.Rows[id].PointsInto);
+            for (var r = _facts.Rows[id].Parent; r is not null; r = r.Parent)
+                all = all.Add(r.Id);
+        }
+
+        return all;
     }
 
     private void Born(int site, SyntaxNode place, IdSet tags, IdSet wins, IdSet? only = null)
