@@ -1,7 +1,7 @@
 namespace Tare;
 
 /// <summary>Confidence intervals for one proportion. All assume independent rows.</summary>
-public static class ProportionInterval
+public static partial class ProportionInterval
 {
     /// <summary>Exact interval: never covers less than its confidence. 0 at no hits, 1 at all hits.</summary>
     /// <param name="hits">Successes, 0 to <paramref name="rows"/>.</param>

@@ -33,4 +33,24 @@ public static class McNemarTest
         long discordant = onlyFirst + onlySecond;
         return discordant == 0 ? 1 : BinomialTest.MidP(onlyFirst, discordant, 0.5, side);
     }
+
+    /// <summary>Chi-square form: (b-c)²/(b+c) on one degree of freedom; approximate, for many discordant rows.</summary>
+    /// <param name="onlyFirst">b: rows only the first classifier gets right, at least 0.</param>
+    /// <param name="onlySecond">c: rows only the second classifier gets right, at least 0.</param>
+    /// <param name="continuity">Whether 1 is taken off |b-c| (not below 0).</param>
+    /// <returns>The statistic and its two-sided p-value; degenerate with p = 1 when no row is discordant.</returns>
+    /// <exception cref="ArgumentOutOfRangeException">A count is negative.</exception>
+    /// <remarks>Sources: McNemar 1947, Psychometrika 12; Edwards 1948, Psychometrika 13, for the correction.</remarks>
+    public static TestResult ChiSquareForm(long onlyFirst, long onlySecond, bool continuity = false)
+    {
+        Check.AtLeast(onlyFirst, 0, nameof(onlyFirst));
+        Check.AtLeast(onlySecond, 0, nameof(onlySecond));
+        double discordant = (double)onlyFirst + onlySecond, distance = Math.Abs((double)onlyFirst - onlySecond);
+        if (discordant == 0)
+            return new TestResult("McNemar chi-square test", 0, 1, Side.TwoSided, Degenerate: true);
+        if (continuity)
+            distance = Math.Max(0, distance - 1);
+        double statistic = distance * distance / discordant;
+        return new TestResult("McNemar chi-square test", statistic, ChiSquare.Upper(statistic, 1), Side.TwoSided);
+    }
 }

@@ -73,6 +73,29 @@ public class SpecialFunctionTests
     }
 
     [Fact]
+    public void Chi_square_tails()
+    {
+        foreach (ReferenceRow row in ReferenceTable.Read("special_chi2.csv"))
+        {
+            Tails tails = ChiSquare.Tails(row.Number("x"), row.Number("df"));
+            row.Agrees("cdf", tails.Lower);
+            row.Agrees("sf", tails.Upper);
+            row.Agrees("log_sf", tails.LogUpper);
+        }
+    }
+
+    [Fact]
+    public void F_tails()
+    {
+        foreach (ReferenceRow row in ReferenceTable.Read("special_f.csv"))
+        {
+            Tails tails = FisherF.Tails(row.Number("f"), row.Number("df1"), row.Number("df2"));
+            row.Agrees("cdf", tails.Lower);
+            row.Agrees("sf", tails.Upper);
+        }
+    }
+
+    [Fact]
     public void Binomial_law()
     {
         foreach (ReferenceRow row in ReferenceTable.Read("special_binomial.csv"))

@@ -1,0 +1,328 @@
+using Microsoft.CodeAnalysis;
+using Microsoft.CodeAnalysis.CSharp;
+using Microsoft.CodeAnalysis.CSharp.Syntax;
+using Microsoft.CodeAnalysis.Operations;
+using Tare.Analyzers.Knowledge;
+
+namespace Tare.Analyzers.Flow;
+
+/// <summary>Comparisons, and what they decide.</summary>
+internal sealed partial class Walker
+{
+    private IDisposable Guarded(Value condition, IOperation test, bool negated, bool otherExits = false)
+    {
+        _guards.Add(new Guard { Condition = condition, LoopDepth = _loops.Count, Negated = negated, Syntax = test.Syntax, OtherExits = otherExits });
+        return new Popper(_guards);
+    }
+
+    private sealed class Popper : IDisposable
+    {
+        private readonly List<Guard> _guards;
+
+        public Popper(List<Guard> guards) => _guards = guards;
+
+        public void Dispose()
+        {
+            if (_guards.Count > 0)
+                _guards.RemoveAt(_guards.Count - 1);
+        }
+    }
+
+    /// <summary>What is set under a condition on single rows depends on those rows: `if (predicted == label) hits++`.</summary>
+    private Value Implied(Value value, int fromGuard = 0)
+    {
+        for (int i = fromGuard; i < _guards.Count; i++)
+        {
+            var condition = _guards[i].Condition;
+            if (Tag.Has(condition.Tags, Level.Element))
+            {
+                value = value.With(
+                    tags: value.Tags.Union(condition.Tags), varies: value.Varies.Union(condition.Varies), indexed: value.Indexed.Union(condition.Indexed),
+                    sites: value.Sites.Union(condition.Sites), wins: value.Wins.Union(condition.Wins), models: value.Models.Union(condition.Models));
+            }
+        }
+
+        return value;
+    }
+
+    private Value Compare(IOperation operation, IOperation leftOperation, IOperation rightOperation, Value left, Value right, BinaryOperatorKind kind)
+    {
+        var result = left.Combine(right);
+        LevelTestOf(operation, leftOperation, rightOperation, left, right, kind);
+        bool equality = kind is BinaryOperatorKind.Equals or BinaryOperatorKind.NotEquals;
+        bool quantities = Tag.Has(left.Tags, Level.Aggregate) || Tag.Has(right.Tags, Level.Aggregate);
+        if (!quantities || (equality && !left.Has(Traits.Extreme) && !right.Has(Traits.Extreme)))
+            return result.With(traits: Traits.None);
+        bool smaller = kind is BinaryOperatorKind.LessThan or BinaryOperatorKind.LessThanOrEqual;
+        int id = _facts.Compare(Place(operation.Syntax), _frame, i => new Comparison(
+            i, operation, left, right, NameOf(leftOperation), NameOf(rightOperation), smaller, _frame, _loops.Count, equality));
+        return result.With(compares: IdSet.Of(id), traits: Traits.None);
+    }
+
+    /// <summary>
+    /// A value that is set under a comparison of scores and outlives the loop of the candidates won that comparison.
+    /// <paramref name="depth"/> is how many loops were running where the target was declared.
+    /// </summary>
+    private Value Survive(int depth, Value value, SyntaxNode syntax, ISymbol? target)
+    {
+        for (int i = _guards.Count - 1; i >= 0; i--)
+        {
+            var guard = _guards[i];
+            foreach (int id in guard.Condition.Compares)
+            {
+                var comparison = _facts.Comparisons[id];
+                if (comparison.Equality)
+                    continue;
+                if (Decide(comparison, depth, value, guard) is { } choice)
+                    value = value.Winning(IdSet.Of(choice.Id));
+            }
+        }
+
+        return value;
+    }
+
+    private Choice? Decide(Comparison comparison, int depth, Value value, Guard? guard)
+    {
+        int loops = Math.Min(comparison.LoopDepth, _loops.Count);
+        var running = IdSet.Empty;
+        for (int i = Math.Max(0, depth); i < loops; i++)
+            running = running.Union(_loops[i].Origins);
+        var left = comparison.Left;
+        var right = comparison.Right;
+        var rows = Tag.At(left.Tags, Level.Aggregate).Intersect(Tag.At(right.Tags, Level.Aggregate));
+        if (rows.IsEmpty)
+            return null;
+        var family = left.Varies.Union(right.Varies).Intersect(running);
+        var rowFamily = IdSet.Empty;
+        foreach (int r in rows)
+            rowFamily = rowFamily.Union(_facts.Rows[r].Varies.Intersect(running));
+        bool straight = family.IsEmpty && rowFamily.IsEmpty;
+        if (straight)
+        {
+            if (left.Sites.IsEmpty || right.Sites.IsEmpty || left.Sites.Overlaps(right.Sites) || !IsCandidate(value))
+                return null;
+        }
+
+        bool isScore = IsScoreOf(value, left) || IsScoreOf(value, right);
+        if (!straight && !isScore && !value.Varies.Overlaps(family) && !value.Indexed.Overlaps(family) && !VariesThroughObjects(value, family.Union(rowFamily)))
+            return null;
+        if (Silent)
+            return null;
+        var choice = _facts.ChoiceAt(Place(comparison.Operation.Syntax), comparison.Frame, ChoiceKind.Comparison);
+        choice.Family = choice.Family.Union(family);
+        choice.RowFamily = choice.RowFamily.Union(rowFamily);
+        choice.Rows = choice.Rows.Union(rows);
+        choice.Sites = choice.Sites.Union(left.Sites).Union(right.Sites);
+        choice.Kept |= !isScore;
+        choice.Running = RunningOrigins();
+        choice.IsPValue |= left.Has(Traits.PValue) && right.Has(Traits.PValue);
+        if (straight)
+            choice.StraightCount = Math.Max(choice.StraightCount, left.Sites.Union(right.Sites).Count);
+        // "left < right" with left the new score: lower wins; guards that keep the branch out turn it round
+        bool leftIsNew = !left.Varies.IsEmpty && (right.Wins.Contains(choice.Id) || right.Varies.Count <= left.Varies.Count);
+        choice.LowerWins = (comparison.LeftSmaller == leftIsNew) != (guard?.Negated ?? false);
+        choice.ScoreName ??= (leftIsNew ? comparison.RightName ?? comparison.LeftName : comparison.LeftName ?? comparison.RightName);
+        return choice;
+    }
+
+    private static bool IsCandidate(Value value) =>
+        !value.Objects.IsEmpty || !value.Tags.IsEmpty || !value.Closures.IsEmpty || value.Fields is not null || value.Has(Traits.Text) || value.Number is null;
+
+    private static bool IsScoreOf(Value value, Value score) =>
+        !score.Sites.IsEmpty && value.Fields is null && value.Objects.IsEmpty && value.Sites.Equals(score.Sites) && value.Tags.Equals(score.Tags);
+
+    private bool VariesThroughObjects(Value value, IdSet family)
+    {
+        if (value.Fields is not null)
+        {
+            foreach (var field in value.Fields.Values)
+            {
+                if (field.Varies.Overlaps(family) || VariesThroughObjects(field, family))
+                    return true;
+            }
+        }
+
+        return !value.Objects.IsEmpty && Deep(value, 4).Varies.Overlaps(family);
+    }
+
+    /// <summary>`cond ? a : b`, with the choice it makes when the condition compares scores.</summary>
+    private Value Conditional(IConditionalOperation conditional)
+    {
+        var condition = Expression(conditional.Condition);
+        Value yes, no;
+        using (Guarded(condition, conditional.Condition, negated: false))
+            yes = Expression(conditional.WhenTrue);
+        using (Guarded(condition, conditional.Condition, negated: true))
+            no = conditional.WhenFalse is null ? Value.Empty : Expression(conditional.WhenFalse);
+        var joined = yes.Join(no);
+        var outcome = ConditionTags(joined, condition);
+        foreach (int id in condition.Compares)
+        {
+            var comparison = _facts.Comparisons[id];
+            if (comparison.Equality || (IsPlainText(yes) && IsPlainText(no)))
+                continue;
+            var probe = joined.Number is null && joined.IsEmpty ? new Value { Traits = Traits.Text } : joined;
+            if (Decide(comparison, 0, probe, null) is { } choice)
+                outcome = outcome.Winning(IdSet.Of(choice.Id));
+        }
+
+        return outcome;
+    }
+
+    private static bool IsPlainText(Value value) => value.Has(Traits.Text) && value.Tags.IsEmpty && value.Objects.IsEmpty && value.Varies.IsEmpty;
+
+    private static Value ConditionTags(Value value, Value condition) =>
+        Tag.Has(condition.Tags, Level.Element)
+            ? value.With(
+                tags: value.Tags.Union(condition.Tags), varies: value.Varies.Union(condition.Varies), indexed: value.Indexed.Union(condition.Indexed),
+                sites: value.Sites.Union(condition.Sites), wins: value.Wins.Union(condition.Wins))
+            : value;
+
+    private Value Extreme(SyntaxNode syntax, Value a, Value b, bool lower)
+    {
+        var joined = a.Join(b);
+        var rows = Tag.At(a.Tags, Level.Aggregate).Intersect(Tag.At(b.Tags, Level.Aggregate));
+        if (rows.IsEmpty || Silent)
+            return joined;
+        var running = RunningOrigins();
+        var family = a.Varies.Union(b.Varies).Intersect(running);
+        var rowFamily = IdSet.Empty;
+        foreach (int r in rows)
+            rowFamily = rowFamily.Union(_facts.Rows[r].Varies.Intersect(running));
+        if (family.IsEmpty && rowFamily.IsEmpty && (a.Sites.IsEmpty || b.Sites.IsEmpty || a.Sites.Overlaps(b.Sites)))
+            return joined;
+        var choice = _facts.ChoiceAt(Place(syntax), _frame, ChoiceKind.Extreme);
+        choice.Family = choice.Family.Union(family);
+        choice.RowFamily = choice.RowFamily.Union(rowFamily);
+        choice.Rows = choice.Rows.Union(rows);
+        choice.Sites = choice.Sites.Union(joined.Sites);
+        choice.LowerWins = lower;
+        choice.Running = running;
+        if (family.IsEmpty && rowFamily.IsEmpty)
+            choice.StraightCount = Math.Max(choice.StraightCount, joined.Sites.Count);
+        return joined.Winning(IdSet.Of(choice.Id)).With(traits: joined.Traits | Traits.Extreme);
+    }
+
+    /// <summary>A choice made by a call over a sequence: the key of its elements is a score.</summary>
+    private Choice? ChoiceByKey(SyntaxNode place, IdSet origins, Value key, ChoiceKind kind, bool lower, string? name)
+    {
+        var rows = Tag.At(key.Tags, Level.Aggregate);
+        if (rows.IsEmpty || Silent)
+            return null;
+        var family = key.Varies.Intersect(origins);
+        var rowFamily = IdSet.Empty;
+        foreach (int r in rows)
+            rowFamily = rowFamily.Union(_facts.Rows[r].Varies.Intersect(origins));
+        if (family.IsEmpty && rowFamily.IsEmpty)
+            return null;
+        var choice = _facts.ChoiceAt(Place(place), _frame, kind);
+        if (kind == ChoiceKind.Call)
+            choice.Kind = kind;
+        choice.Family = choice.Family.Union(family);
+        choice.RowFamily = choice.RowFamily.Union(rowFamily);
+        choice.Rows = choice.Rows.Union(rows);
+        choice.Sites = choice.Sites.Union(key.Sites);
+        choice.Kept |= kind == ChoiceKind.Call;
+        choice.LowerWins = lower;
+        choice.IsPValue |= key.Has(Traits.PValue);
+        choice.ScoreName ??= name;
+        choice.Running = RunningOrigins();
+        return choice;
+    }
+
+    private static string? NameOf(IOperation operation) => operation switch
+    {
+        ILocalReferenceOperation local => local.Local.Name,
+        IParameterReferenceOperation parameter => parameter.Parameter.Name,
+        IFieldReferenceOperation field => field.Field.Name,
+        IPropertyReferenceOperation property => property.Property.IsIndexer && property.Instance is not null ? NameOf(property.Instance) : property.Property.Name,
+        IConversionOperation conversion => NameOf(conversion.Operand),
+        IParenthesizedOperation parenthesised => NameOf(parenthesised.Operand),
+        IInvocationOperation invocation => invocation.TargetMethod.Name,
+        IAwaitOperation awaited => NameOf(awaited.Operation),
+        IArrayElementReferenceOperation element => NameOf(element.ArrayReference),
+        IBinaryOperation binary => NameOf(binary.LeftOperand),
+        _ => null,
+    };
+
+    // ---- p-values and levels
+
+    private void LevelTestOf(IOperation operation, IOperation leftOperation, IOperation rightOperation, Value left, Value right, BinaryOperatorKind kind)
+    {
+        bool order = kind is BinaryOperatorKind.LessThan or BinaryOperatorKind.LessThanOrEqual or BinaryOperatorKind.GreaterThan or BinaryOperatorKind.GreaterThanOrEqual;
+        if (!order || Silent)
+            return;
+        bool leftIsP = left.Has(Traits.PValue), rightIsP = right.Has(Traits.PValue);
+        if (leftIsP == rightIsP)
+            return;
+        var p = leftIsP ? left : right;
+        var level = leftIsP ? right : left;
+        var levelOperation = leftIsP ? rightOperation : leftOperation;
+        if (p.Has(Traits.Corrected) || level.Has(Traits.Corrected) || level.Has(Traits.PValue) || !IsLevel(level))
+            return;
+        if (!level.Varies.IsEmpty)
+            return;
+        var family = p.Varies.Union(p.Indexed).Intersect(RunningOrigins());
+        foreach (var row in Tag.At(p.Tags, Level.Aggregate).Union(Tag.At(p.Tags, Level.Element)))
+            family = family.Union(_facts.Rows[row].Varies.Intersect(RunningOrigins()));
+        family = family.Union(p.Over);
+        if (family.IsEmpty)
+            return;
+        bool less = kind is BinaryOperatorKind.LessThan or BinaryOperatorKind.LessThanOrEqual;
+        bool significantWhenTrue = less == leftIsP;
+        var test = new LevelTest(operation.Syntax, p, level, family, _frame, NameOf(leftIsP ? leftOperation : rightOperation), NameOf(levelOperation), _facts.Order++)
+        {
+            Conjunction = IsConjunction(operation, significantWhenTrue) || _needsAll > 0,
+            Kept = true,
+        };
+        _facts.Test(test);
+    }
+
+    private static bool IsLevel(Value level) =>
+        level.Number is { } number ? number is > 0 and < 0.5 : level.Has(Traits.NamedLevel);
+
+    private int _needsAll;
+
+    /// <summary>Every p must be small, or tests stop at the first that is not: nothing to correct.</summary>
+    private static bool IsConjunction(IOperation comparison, bool significantWhenTrue)
+    {
+        bool sense = significantWhenTrue;
+        IOperation child = comparison;
+        for (var parent = comparison.Parent; parent is not null; child = parent, parent = parent.Parent)
+        {
+            switch (parent)
+            {
+                case IUnaryOperation { OperatorKind: UnaryOperatorKind.Not }:
+                    sense = !sense;
+                    continue;
+                case IParenthesizedOperation or IConversionOperation:
+                    continue;
+                case IBinaryOperation { OperatorKind: BinaryOperatorKind.ConditionalAnd or BinaryOperatorKind.And }:
+                case IBinaryOperation { OperatorKind: BinaryOperatorKind.ConditionalOr or BinaryOperatorKind.Or }:
+                    continue;
+                case ICompoundAssignmentOperation { OperatorKind: BinaryOperatorKind.And } when sense:
+                    return true;
+                case ISimpleAssignmentOperation assignment when sense && assignment.Value.DescendantsAndSelf().OfType<IBinaryOperation>().Any(b =>
+                    b.OperatorKind is BinaryOperatorKind.ConditionalAnd or BinaryOperatorKind.And
+                    && b.DescendantsAndSelf().Any(d => d.Syntax.IsEquivalentTo(assignment.Target.Syntax))):
+                    return true;
+                case IConditionalOperation conditional when ReferenceEquals(conditional.Condition, child):
+                    var insignificant = sense ? conditional.WhenFalse : conditional.WhenTrue;
+                    return insignificant is not null && (LeavesForGood(insignificant) || SetsFalse(insignificant));
+                case IWhileLoopOperation:
+                    return false;
+                default:
+                    return false;
+            }
+        }
+
+        return false;
+    }
+
+    /// <summary>`if (p &gt;= level) allSmall = false;`</summary>
+    private static bool SetsFalse(IOperation branch)
+    {
+        var only = branch is IBlockOperation { Operations.Length: 1 } block ? block.Operations[0] : branch;
+        return only is IExpressionStatementOperation { Operation: ISimpleAssignmentOperation { Value.ConstantValue: { HasValue: true, Value: false } } };
+    }
+}
