@@ -94,7 +94,6 @@ public class RuleConventionTests
     [Theory]
     [InlineData("Flow", "Rules")]
     [InlineData("Knowledge", "Rules")]
-    [InlineData("Knowledge", "Flow")]
     public void LowerLayersDoNotKnowHigherOnes(string lower, string higher)
     {
         var reference = new Regex($@"\b(Tare\.Analyzers\.)?{higher}\.[A-Z]|using\s+(static\s+)?Tare\.Analyzers\.{higher}\b");
