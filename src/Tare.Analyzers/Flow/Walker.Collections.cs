@@ -26,6 +26,7 @@ internal sealed partial class Walker
         {
             var value = Expression(size);
             o.Count ??= value.Number;
+            o.SizeVaries = o.SizeVaries.Union(value.Varies);
         }
 
         return Ref(o);
@@ -75,7 +76,7 @@ internal sealed partial class Walker
             count++;
         }
 
-        if (counted && o.Count is null)
+        if (counted && count > 0 && o.Count is null)
             o.Count = count;
         return Ref(o);
     }
@@ -83,6 +84,8 @@ internal sealed partial class Walker
     private void StoreInto(HeapObject o, Value value)
     {
         var joined = o.Element.Join(value);
+        if (o.HoldsPValues && joined.Fields is null && joined.Objects.IsEmpty)
+            joined = joined.With(traits: joined.Traits | Traits.PValue);
         if (!joined.Same(o.Element))
         {
             o.Element = joined;
@@ -188,6 +191,8 @@ internal sealed partial class Walker
                 _changes++;
             }
 
+            if (per.IsEmpty && RunningOrigins(o.Depth).IsEmpty && !(o.Type is IArrayTypeSymbol))
+                (o.AddSites ??= new HashSet<SyntaxNode>()).Add(syntax);
             if (o.Rows is null && !o.IsWindow && !per.IsEmpty)
                 PartByCondition(o, value, syntax);
             StoreInto(o, value);
@@ -235,6 +240,8 @@ internal sealed partial class Walker
             element = element.Join(o.Content);
         if (o.Rows is not null)
             element = Tagged(element, IdSet.Of(Tag.Of(o.Rows.Id, Level.Element)));
+        if (!o.SizeVaries.IsEmpty)
+            element = element.Varying(o.SizeVaries);
         if (o.Per.IsEmpty)
             element = element.Varying(IdSet.Of(OwnOrigin(o).Id));
         else if (!element.Objects.IsEmpty || !element.Closures.IsEmpty)
@@ -386,6 +393,8 @@ internal sealed partial class Walker
             var element = o.Element.Join(o.Content);
             if (o.Rows is not null)
                 element = Tagged(element, IdSet.Of(Tag.Of(o.Rows.Id, Level.Element)));
+            if (!o.SizeVaries.IsEmpty)
+                element = element.Varying(o.SizeVaries);
             MoveThrough(collection, o, index);
             var moved = index.Varies.Union(index.Indexed);
             bool throughRows = !RowsIn(o).IsEmpty || Tag.Has(collection.Tags, Level.Element);
@@ -485,9 +494,11 @@ internal sealed partial class Walker
         bool self = key.Sites.Equals(o.Element.Sites) && !key.Sites.IsEmpty && o.Element.Fields is null && o.Element.Objects.IsEmpty;
         var choice = ChoiceByKey(o.SortPlace ?? syntax, origins, key, self ? ChoiceKind.Extreme : ChoiceKind.Call, o.Descending == last, null);
         var element = ElementOf(o);
-        element = element.With(varies: element.Varies.Except(origins), fields: element.Fields);
-        if (key.Has(Traits.PValue))
-            element = element.With(traits: element.Traits);
+        // which one comes first depends on all of them
+        element = CloseValue(element, origins, RowsThrough(collection, o), syntax, 4);
+        var order = key.With(tags: Tag.Move(key.Tags, Level.Element, Level.Aggregate, RowsThrough(collection, o).Contains));
+        if (!RowsThrough(collection, o).IsEmpty)
+            element = Tagged(element, order.Tags);
         return (choice is null ? element : element.Winning(IdSet.Of(choice.Id))).Tagged(collection.Tags).Winning(collection.Wins);
     }
 }

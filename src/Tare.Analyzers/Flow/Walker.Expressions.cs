@@ -229,7 +229,7 @@ internal sealed partial class Walker
     private Value ReadMember(Value instance, string name, ISymbol member, ITypeSymbol type)
     {
         if (instance.Fields is not null && instance.Fields.TryGetValue(name, out var held))
-            return held.Winning(instance.Wins).Varying(instance.Varies);
+            return held.Winning(instance.Wins).Varying(instance.Varies).Tagged(instance.Tags.Where(t => Tag.LevelOf(t) == Level.Aggregate));
         var result = Value.Empty;
         bool found = false;
         foreach (int id in instance.Objects)
@@ -257,6 +257,13 @@ internal sealed partial class Walker
                 o.Store(name, unseen);
                 result = unseen;
             }
+        }
+
+        if (Tag.Has(instance.Tags, Level.Aggregate) && Tag.Has(result.Tags, Level.Element))
+        {
+            // a row picked by looking at all of them: what it holds depends on all
+            var over = WithAncestors(Tag.At(instance.Tags, Level.Aggregate).Except(Tag.At(instance.Tags, Level.Element)));
+            result = result.With(tags: Tag.Move(result.Tags, Level.Element, Level.Aggregate, over.Contains));
         }
 
         if (!instance.Tags.IsEmpty || !instance.Varies.IsEmpty || !instance.Wins.IsEmpty || !instance.Indexed.IsEmpty)

@@ -174,7 +174,7 @@ internal sealed partial class Walker
         foreach (int id in condition.Compares)
         {
             var comparison = _facts.Comparisons[id];
-            if (comparison.Equality || (IsPlainText(yes) && IsPlainText(no)))
+            if (comparison.Equality || (IsPlainText(yes) && IsPlainText(no) && conditional.Parent is not (IVariableInitializerOperation or ISimpleAssignmentOperation or IReturnOperation)))
                 continue;
             var probe = joined.Number is null && joined.IsEmpty ? new Value { Traits = Traits.Text } : joined;
             if (Decide(comparison, 0, probe, null) is { } choice)
@@ -269,7 +269,7 @@ internal sealed partial class Walker
         bool order = kind is BinaryOperatorKind.LessThan or BinaryOperatorKind.LessThanOrEqual or BinaryOperatorKind.GreaterThan or BinaryOperatorKind.GreaterThanOrEqual;
         if (!order || Silent)
             return;
-        bool leftIsP = left.Has(Traits.PValue), rightIsP = right.Has(Traits.PValue);
+        bool leftIsP = IsP(left, right), rightIsP = IsP(right, left);
         if (leftIsP == rightIsP)
             return;
         var p = leftIsP ? left : right;
@@ -285,6 +285,8 @@ internal sealed partial class Walker
         family = family.Union(p.Over);
         if (family.IsEmpty)
             return;
+        if (IsLoopConditionOf(operation, family))
+            return;
         bool less = kind is BinaryOperatorKind.LessThan or BinaryOperatorKind.LessThanOrEqual;
         bool significantWhenTrue = less == leftIsP;
         var test = new LevelTest(operation.Syntax, p, level, family, _frame, NameOf(leftIsP ? leftOperation : rightOperation), NameOf(levelOperation), _facts.Order++)
@@ -293,6 +295,28 @@ internal sealed partial class Walker
             Kept = true,
         };
         _facts.Test(test);
+    }
+
+    /// <summary>A p-value, or a tail probability held against something as small as a level.</summary>
+    private static bool IsP(Value value, Value other) => value.Has(Traits.PValue) || value.Has(Traits.Tail) && other.Number is > 0 and <= 0.1;
+
+    /// <summary>`while (p &gt;= 0.05)`: one test repeated on more rows, not a family.</summary>
+    private bool IsLoopConditionOf(IOperation comparison, IdSet family)
+    {
+        foreach (int id in family)
+        {
+            var condition = _facts.Origins[id].Syntax switch
+            {
+                WhileStatementSyntax loop => loop.Condition,
+                DoStatementSyntax loop => loop.Condition,
+                ForStatementSyntax loop => loop.Condition,
+                _ => null,
+            };
+            if (condition is not null && condition.Span.Contains(comparison.Syntax.Span) && condition.SyntaxTree == comparison.Syntax.SyntaxTree)
+                return true;
+        }
+
+        return false;
     }
 
     private static bool IsLevel(Value level) =>

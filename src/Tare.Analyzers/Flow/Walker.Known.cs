@@ -74,7 +74,7 @@ internal sealed partial class Walker
         switch (entry.Effect)
         {
             case CatalogueEffect.Nothing:
-                return symbol.ContainingType?.Name is "Random" or "RandomNumberGenerator" ? new Value { Traits = Traits.Random } : Value.Empty;
+                return symbol.ContainingType?.Name is "Random" or "RandomNumberGenerator" ? new Value { Traits = Traits.Random, Varies = Deep(instance).Varies } : Value.Empty;
             case CatalogueEffect.Loads:
                 return Load(entry, method, instance, arguments, syntax, type);
             case CatalogueEffect.Passes:

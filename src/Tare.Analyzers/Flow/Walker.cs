@@ -149,6 +149,14 @@ internal sealed partial class Walker
 
         public SyntaxNode Syntax { get; set; } = null!;
 
+        /// <summary>The first round through a loop does not know yet which rows the loop goes through.</summary>
+        public bool IsFirst { get; set; }
+
+        public bool Again { get; set; }
+
+        /// <summary>What the number of rounds differs with.</summary>
+        public IdSet Bound { get; set; }
+
         public Frame Frame { get; set; } = null!;
     }
 
