@@ -69,6 +69,22 @@ internal sealed class HeapObject
     /// <summary>A half of a split by an API: the part of <see cref="Rows"/> that a property gives.</summary>
     public bool IsSplit { get; set; }
 
+    /// <summary>Something else holds it, so that making another at the same place must not take its contents away.</summary>
+    public bool Escaped { get; set; }
+
+    /// <summary>Made anew: what the one before it held is gone, unless that one is still held.</summary>
+    public void Renew()
+    {
+        if (Escaped)
+            return;
+        Element = Value.Empty;
+        Key = Value.Empty;
+        Content = Value.Empty;
+        Fields?.Clear();
+        SortKey = null;
+        SortPlace = null;
+    }
+
     public Value? Field(string name) => Fields is not null && Fields.TryGetValue(name, out var value) ? value : null;
 
     /// <summary>Adds to a field; true when that told something new.</summary>

@@ -217,7 +217,7 @@ internal sealed class Reading
     {
         foreach (int r in Facts.Origins[id].Rows)
         {
-            if (r == rows.Id || _roles.Related(r, rows.Id) || ParallelTo(r, rows))
+            if (r == rows.Id || _roles.Related(r, rows.Id) || ParallelTo(r, rows) || _roles.Of(r) is { Role: Role.Training, Evidence: not Evidence.None })
                 return false;
         }
 

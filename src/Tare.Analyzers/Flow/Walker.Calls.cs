@@ -326,6 +326,7 @@ internal sealed partial class Walker
         if (type is { TypeKind: TypeKind.Delegate } && creation.Arguments.Length == 1)
             return Expression(creation.Arguments[0].Value);
         var o = _facts.ObjectAt(creation.Syntax, _frame.Chain, type, _loops.Count);
+        o.Renew();
         o.IsCollection |= RowsTypes.IsCollection(type);
         var self = Ref(o);
         if (constructor is not null && type is { DeclaringSyntaxReferences.Length: > 0 })
@@ -584,6 +585,7 @@ internal sealed partial class Walker
         }
 
         var model = _facts.ObjectAt(syntax, _frame.Chain, type, _loops.Count, 4);
+        model.Renew();
         if (whole.Count > 0 || !all.IsEmpty)
         {
             if (!whole.IsEmpty)

@@ -22,6 +22,7 @@ internal sealed partial class Walker
         if (array.Initializer is not null)
             return Literal(array.Initializer.ElementValues, array.Syntax, array.Type);
         var o = NewCollection(array.Syntax, array.Type);
+        o.Renew();
         foreach (var size in array.DimensionSizes)
         {
             var value = Expression(size);
@@ -35,6 +36,7 @@ internal sealed partial class Walker
     private Value Literal(IReadOnlyList<IOperation> elements, SyntaxNode syntax, ITypeSymbol? type)
     {
         var o = NewCollection(syntax, type);
+        o.Renew();
         double count = 0;
         bool counted = true;
         // a very long literal says no more than its beginning does
@@ -83,6 +85,7 @@ internal sealed partial class Walker
 
     private void StoreInto(HeapObject o, Value value)
     {
+        Hold(value);
         var joined = o.Element.Join(value);
         if (o.HoldsPValues && joined.Fields is null && joined.Objects.IsEmpty)
             joined = joined.With(traits: joined.Traits | Traits.PValue);
@@ -352,7 +355,7 @@ internal sealed partial class Walker
     /// <summary>`collection[i]`: an index that a running loop moves reads every element in turn.</summary>
     private Value IndexInto(Value collection, IReadOnlyList<IOperation> indices, SyntaxNode syntax, ITypeSymbol? type)
     {
-        if (indices.Count == 1 && indices[0] is IRangeOperation range)
+        if (indices.Count == 1 && RangeIn(indices[0]) is { } range)
             return SliceByRange(collection, range, syntax, type);
         var index = Value.Empty;
         foreach (var i in indices)
@@ -368,6 +371,16 @@ internal sealed partial class Walker
 
         return ElementAt(collection, index, index, syntax, indices);
     }
+
+    /// <summary>A range, as such or converted to a library's own index type.</summary>
+    private static IRangeOperation? RangeIn(IOperation index) => index switch
+    {
+        IRangeOperation range => range,
+        IConversionOperation conversion => RangeIn(conversion.Operand),
+        IArrayCreationOperation { Initializer.ElementValues: { Length: > 0 } values } => RangeIn(values[0]),
+        _ when CollectionExpression.IsOne(index) && CollectionExpression.Elements(index) is { Count: > 0 } elements => RangeIn(elements[0]),
+        _ => null,
+    };
 
     private Value ElementAt(Value collection, Value index, Value? single, SyntaxNode syntax, IReadOnlyList<IOperation> indices)
     {
@@ -450,8 +463,7 @@ internal sealed partial class Walker
 
             if (!o.Per.IsEmpty && !random && !scope.Origins.ContainsAll(o.Per) && !o.Per.Overlaps(RunningOrigins()))
                 scope.Origins = scope.Origins.Union(o.Per);
-            if (random)
-                break;
+            break;
         }
     }
 

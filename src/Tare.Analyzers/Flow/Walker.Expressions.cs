@@ -56,7 +56,7 @@ internal sealed partial class Walker
             case ICompoundAssignmentOperation compound:
                 return CompoundAssign(compound);
             case IIncrementOrDecrementOperation step:
-                var stepped = Implied(Expression(step.Target).Data());
+                var stepped = Counted(Expression(step.Target).Data());
                 Assign(step.Target, stepped, step.Syntax, survives: false);
                 return stepped;
             case ICoalesceAssignmentOperation coalesce:
@@ -423,7 +423,7 @@ internal sealed partial class Walker
         var value = RowsTypes.IsScalar(compound.Type) ? old.Combine(by) : Typed(Deep(old).Combine(Deep(by)), compound.Type, compound.Syntax, Value.Empty);
         if (compound.OperatorKind == BinaryOperatorKind.Divide && (IsLevel(old) || old.Has(Traits.NamedLevel)) && !IsHalf(by))
             value = value.With(traits: value.Traits | Traits.Corrected);
-        return Assign(compound.Target, value, compound.Syntax, survives: false);
+        return Assign(compound.Target, by.Number is not null ? Counted(value) : value, compound.Syntax, survives: false);
     }
 
     private Value Tuple(ITupleOperation tuple)
@@ -576,7 +576,7 @@ internal sealed partial class Walker
             if (arm.Guard is not null)
                 condition = condition.Combine(Expression(arm.Guard)) is var c ? c : condition;
             Value value;
-            using (Guarded(condition.Combine(subject), choice.Value, negated: false))
+            using (Guarded(condition.Combine(Deep(subject)), choice.Value, negated: false))
                 value = Expression(arm.Value);
             value = ConditionTags(value, Deep(subject));
             result = first ? value : result.Join(value);

@@ -45,6 +45,22 @@ internal sealed partial class Walker
         return value;
     }
 
+    /// <summary>A count of outcomes depends on what was compared, quantities included: a permutation test counts them.</summary>
+    private Value Counted(Value value)
+    {
+        for (int i = _frame.GuardDepth; i < _guards.Count; i++)
+        {
+            var condition = _guards[i].Condition;
+            if (!condition.Compares.IsEmpty || Tag.Has(condition.Tags, Level.Element))
+            {
+                value = value.With(
+                    tags: value.Tags.Union(condition.Tags), varies: value.Varies.Union(condition.Varies), indexed: value.Indexed.Union(condition.Indexed), sites: value.Sites.Union(condition.Sites));
+            }
+        }
+
+        return value;
+    }
+
     private Value Compare(IOperation operation, IOperation leftOperation, IOperation rightOperation, Value left, Value right, BinaryOperatorKind kind)
     {
         var result = left.Combine(right);

@@ -125,6 +125,13 @@ internal sealed partial class Walker
     {
         var all = Gather(instance, arguments);
         var o = NewCollection(syntax, RowsTypes.IsTask(type, out var result) ? result : type);
+        if (Tag.Has(all.Tags, Level.Element))
+        {
+            // one file a row: what it holds belongs to that row
+            StoreInto(o, all.With(objects: IdSet.Empty));
+            return Ref(o).Tagged(ElementTags(all.Tags)).Winning(all.Wins);
+        }
+
         if (o.Rows is null)
         {
             o.Rows = _facts.NewRows(Source.Loaded, null, syntax);
@@ -315,6 +322,7 @@ internal sealed partial class Walker
         }
 
         var o = _facts.ObjectAt(syntax, _frame.Chain, type, _loops.Count, 4);
+        o.Renew();
         if (RowsTypes.IsCollection(type))
         {
             o.IsCollection = true;

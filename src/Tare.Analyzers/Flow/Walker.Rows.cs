@@ -75,7 +75,11 @@ internal sealed partial class Walker
     }
 
     /// <summary>The elements are scores or models, not rows.</summary>
-    private static bool HoldsQuantities(HeapObject o) => Tag.Has(o.Element.Tags, Level.Aggregate) && !Tag.Has(o.Element.Tags, Level.Element);
+    private bool HoldsQuantities(HeapObject o)
+    {
+        var element = Deep(o.Element, 3);
+        return Tag.Has(element.Tags, Level.Aggregate) && !Tag.Has(element.Tags, Level.Element);
+    }
 
     private RowSet EnsureRows(HeapObject o, SyntaxNode syntax)
     {

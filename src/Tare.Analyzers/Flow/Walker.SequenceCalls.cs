@@ -153,7 +153,7 @@ internal sealed partial class Walker
                 foreach (int id in top.Objects)
                 {
                     var o = _facts.Objects[id];
-                    var rows = RowsIn(o);
+                    var rows = RowsThrough(source, o);
                     // which elements are taken depends on the key of all of them, and on how many are asked for
                     var key = order.Combine(values[0]);
                     var closed = key.With(tags: Tag.Move(key.Tags, Level.Element, Level.Aggregate, rows.Contains), varies: key.Varies.Except(Per(o)));
