@@ -507,9 +507,10 @@ internal sealed partial class Walker
         var choice = ChoiceByKey(o.SortPlace ?? syntax, origins, key, self ? ChoiceKind.Extreme : ChoiceKind.Call, o.Descending == last, null);
         var element = ElementOf(o);
         // which one comes first depends on all of them
-        element = CloseValue(element, origins, RowsThrough(collection, o), syntax, 4);
-        var order = key.With(tags: Tag.Move(key.Tags, Level.Element, Level.Aggregate, RowsThrough(collection, o).Contains));
-        if (!RowsThrough(collection, o).IsEmpty)
+        var rows = RowsThrough(collection, o).Where(r => !IsRunning(r));
+        element = CloseValue(element, origins, rows, syntax, 4);
+        var order = key.With(tags: Tag.Move(key.Tags, Level.Element, Level.Aggregate, rows.Contains));
+        if (!rows.IsEmpty)
             element = Tagged(element, order.Tags);
         return (choice is null ? element : element.Winning(IdSet.Of(choice.Id))).Tagged(collection.Tags).Winning(collection.Wins);
     }

@@ -34,7 +34,7 @@ internal sealed partial class Walker
         for (int i = fromGuard; i < _guards.Count; i++)
         {
             var condition = _guards[i].Condition;
-            if (Tag.Has(condition.Tags, Level.Element))
+            if (IsOfOneRow(condition))
             {
                 value = value.With(
                     tags: value.Tags.Union(condition.Tags), varies: value.Varies.Union(condition.Varies), indexed: value.Indexed.Union(condition.Indexed),
@@ -45,13 +45,37 @@ internal sealed partial class Walker
         return value;
     }
 
+    /// <summary>The condition is about one row at a time: a loop that is running goes through its rows.</summary>
+    private bool IsOfOneRow(Value condition)
+    {
+        foreach (int tag in condition.Tags)
+        {
+            if (Tag.LevelOf(tag) == Level.Element && IsRunning(Tag.Rows(tag)))
+                return true;
+        }
+
+        return false;
+    }
+
+    private bool IsRunning(int rows)
+    {
+        foreach (var scope in _loops)
+        {
+            if (scope.Rows.Contains(rows) || Related(scope.Rows, rows))
+                return true;
+        }
+
+        return false;
+    }
+
     /// <summary>A count of outcomes depends on what was compared, quantities included: a permutation test counts them.</summary>
     private Value Counted(Value value)
     {
         for (int i = _frame.GuardDepth; i < _guards.Count; i++)
         {
             var condition = _guards[i].Condition;
-            if (!condition.Compares.IsEmpty || Tag.Has(condition.Tags, Level.Element))
+            bool innermost = i == _guards.Count - 1 && !IsLoopCondition(_guards[i].Syntax) && _guards[i].LoopDepth == _loops.Count;
+            if (innermost && !condition.Compares.IsEmpty || IsOfOneRow(condition))
             {
                 value = value.With(
                     tags: value.Tags.Union(condition.Tags), varies: value.Varies.Union(condition.Varies), indexed: value.Indexed.Union(condition.Indexed), sites: value.Sites.Union(condition.Sites));
@@ -202,8 +226,8 @@ internal sealed partial class Walker
 
     private static bool IsPlainText(Value value) => value.Has(Traits.Text) && value.Tags.IsEmpty && value.Objects.IsEmpty && value.Varies.IsEmpty;
 
-    private static Value ConditionTags(Value value, Value condition) =>
-        Tag.Has(condition.Tags, Level.Element)
+    private Value ConditionTags(Value value, Value condition) =>
+        IsOfOneRow(condition)
             ? value.With(
                 tags: value.Tags.Union(condition.Tags), varies: value.Varies.Union(condition.Varies), indexed: value.Indexed.Union(condition.Indexed),
                 sites: value.Sites.Union(condition.Sites), wins: value.Wins.Union(condition.Wins))

@@ -16,7 +16,8 @@ internal sealed partial class Walker
         if (entry.Effect == CatalogueEffect.Reports)
         {
             Report(entry, method, instance, invocation);
-            return Value.Empty;
+            // what answers a request depends on what was sent
+            return method.ReturnsVoid || RowsTypes.IsTask(method.ReturnType, out var answer) && answer is null ? Value.Empty : ByArguments(instance, ImmutableArray.Create(arguments), method.ReturnType, invocation.Syntax);
         }
 
         if (entry.Effect == CatalogueEffect.Nothing)
@@ -125,7 +126,7 @@ internal sealed partial class Walker
     {
         var all = Gather(instance, arguments);
         var o = NewCollection(syntax, RowsTypes.IsTask(type, out var result) ? result : type);
-        if (Tag.Has(all.Tags, Level.Element))
+        if (Tag.At(all.Tags, Level.Element).Where(r => _facts.Rows[r].Root.Source == Source.Loaded) is { IsEmpty: false })
         {
             // one file a row: what it holds belongs to that row
             StoreInto(o, all.With(objects: IdSet.Empty));

@@ -158,7 +158,7 @@ internal sealed partial class Walker
                     var key = order.Combine(values[0]);
                     var closed = key.With(tags: Tag.Move(key.Tags, Level.Element, Level.Aggregate, rows.Contains), varies: key.Varies.Except(Per(o)));
                     o.Content = o.Content.Join(closed.With(traits: Traits.None));
-                    StoreInto(o, o.Element.With(tags: o.Element.Tags.Union(closed.Tags), varies: o.Element.Varies.Union(closed.Varies)));
+                    StoreInto(o, o.Element.With(tags: o.Element.Tags.Union(closed.Tags), varies: o.Element.Varies.Union(closed.Varies), wins: o.Element.Wins.Union(closed.Wins)));
                     if (values[0].Number is not 1)
                         o.Count = values[0].Number;
                 }
@@ -528,6 +528,7 @@ internal sealed partial class Walker
         var key = Map(source, closures, syntax, named);
         var choice = ChoiceByKey(place, origins, key, ChoiceKind.Call, lower, null);
         var element = ElementOf(source, named);
+        rows = rows.Where(r => !IsRunning(r));
         element = CloseValue(element, origins, rows, syntax, 4);
         // the row nearest to another: which one depends on all of them
         var order = key.With(tags: Tag.Move(key.Tags, Level.Element, Level.Aggregate, rows.Contains));

@@ -73,7 +73,8 @@ internal sealed partial class Walker
 
     private Value RootParameter(IParameterSymbol parameter)
     {
-        if (parameter.DeclaringSyntaxReferences.Length == 0)
+        // the command line's arguments are no rows
+        if (parameter.DeclaringSyntaxReferences.Length == 0 || parameter.ContainingSymbol is IMethodSymbol { Name: "Main", IsStatic: true } && parameter.Type is IArrayTypeSymbol)
             return Value.Empty;
         return Unseen(parameter, parameter.Type, parameter.DeclaringSyntaxReferences[0].GetSyntax(), Source.Parameter);
     }
