@@ -67,6 +67,32 @@ internal sealed class Session
         return Settle(all);
     }
 
+    /// <summary>The facts that the walks leading to a document hold, for one line or all.</summary>
+    public string Explain(SemanticModel model, int? line, CancellationToken cancellation)
+    {
+        _bodies.Use(model);
+        var text = new System.Text.StringBuilder();
+        bool Wanted(SyntaxNode node)
+        {
+            if (node.SyntaxTree != model.SyntaxTree)
+                return false;
+            var span = node.GetLocation().GetLineSpan();
+            return line is null || (span.StartLinePosition.Line + 1 <= line && span.EndLinePosition.Line + 1 >= line);
+        }
+
+        foreach (var type in _units.LeadingTo(model.SyntaxTree, cancellation))
+        {
+            foreach (var reading in Walk(type).Readings)
+            {
+                string facts = Explanation.Of(reading, Wanted);
+                if (facts.Length > 0)
+                    text.AppendLine($"-- {type.Name}").Append(facts);
+            }
+        }
+
+        return text.ToString();
+    }
+
     /// <summary>One finding a place and rule; several rules at one place stay.</summary>
     private static List<Finding> Settle(List<Finding> findings)
     {
@@ -139,6 +165,7 @@ internal sealed class Session
         if (facts.OverBudget)
             result.OverBudget = true;
         var reading = new Reading(facts, _options);
+        result.Readings.Add(reading);
         foreach (var rule in _rules)
         {
             foreach (var finding in rule.Find(reading))
@@ -177,6 +204,8 @@ internal sealed class Session
     private sealed class UnitResult
     {
         public List<(Finding Finding, ISymbol? Root)> Findings { get; } = new();
+
+        public List<Reading> Readings { get; } = new();
 
         public HashSet<ISymbol> Reached { get; } = new(SymbolEqualityComparer.Default);
 

@@ -87,6 +87,9 @@ internal sealed class Choice
     /// <summary>The origins whose candidates are compared; empty for two candidates in a straight line.</summary>
     public IdSet Family { get; set; }
 
+    /// <summary>Origins that differ only in what they index: candidates when a fitted model is involved.</summary>
+    public IdSet Weak { get; set; }
+
     /// <summary>Rows over which the score was computed.</summary>
     public IdSet Rows { get; set; }
 

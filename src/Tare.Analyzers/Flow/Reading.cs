@@ -213,7 +213,7 @@ internal sealed class Reading
     private static int Rank(Role role) => role switch { Role.Test => 3, Role.Validation => 2, Role.Unsplit => 1, _ => 0 };
 
     /// <summary>The origins of a family that are candidates for these rows, not a way through them.</summary>
-    private IdSet FamilyOver(Choice choice, RowSet rows) => choice.Family.Where(id =>
+    private IdSet FamilyOver(Choice choice, RowSet rows) => (_roles.IsScored(rows) ? choice.Family.Union(choice.Weak) : choice.Family).Where(id =>
     {
         foreach (int r in Facts.Origins[id].Rows)
         {

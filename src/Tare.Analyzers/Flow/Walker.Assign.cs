@@ -118,16 +118,16 @@ internal sealed partial class Walker
             var o = _facts.Objects[id];
             if (o.Store(name, stored))
                 _changes++;
-            Written(o);
+            Written(o, name);
         }
 
         return value;
     }
 
-    private void Written(HeapObject o)
+    private void Written(HeapObject o, string member)
     {
         for (int i = Math.Max(0, o.Depth); i < _loops.Count; i++)
-            _loops[i].Written.Add(o);
+            _loops[i].Written.Add((o, member));
     }
 
     private Value StoreProperty(IPropertyReferenceOperation reference, Value value, SyntaxNode syntax, bool survives)
@@ -170,7 +170,7 @@ internal sealed partial class Walker
             _changes++;
         }
 
-        Written(o);
+        Written(o, Contents);
     }
 
     private void Deconstruct(ITupleOperation target, Value value, SyntaxNode syntax, bool survives)

@@ -33,8 +33,9 @@ internal sealed partial class Walker
                 first = false;
             }
 
-            if (!instance.Varies.IsEmpty || !instance.Wins.IsEmpty)
-                result = result.Varying(instance.Varies).Winning(instance.Wins);
+            // another object each time: what it computes differs as a candidate's work does
+            if (!instance.Varies.IsEmpty || !instance.Wins.IsEmpty || !instance.Indexed.IsEmpty)
+                result = result.Varying(instance.Varies.Union(instance.Indexed)).Winning(instance.Wins);
             return RoleOfResult(NamedTraits(result, method.Name, method.ReturnType), method, invocation.Syntax);
         }
 
@@ -288,7 +289,7 @@ internal sealed partial class Walker
             first = false;
         }
 
-        return result.Varying(target.Varies).Winning(target.Wins);
+        return result.Varying(target.Varies.Union(target.Indexed)).Winning(target.Wins);
     }
 
     private Value InvokeClosure(int id, Value[] arguments, SyntaxNode syntax)
@@ -421,13 +422,13 @@ internal sealed partial class Walker
             if (value.IsEmpty && parameter.HasExplicitDefaultValue && parameter.ExplicitDefaultValue is { } given && Counting.ToDouble(given) is { } number)
                 value = new Value { Number = number };
             value = Named(value, parameter.Name, parameter, parameter.Type, syntax);
-            bool changed = type.IsRecord ? o.Store(parameter.Name, value) : o.Store(PrimaryName(parameter), value);
-            if (changed)
+            string member = type.IsRecord ? parameter.Name : PrimaryName(parameter);
+            if (o.Store(member, value))
                 _changes++;
+            Written(o, member);
             _state.Set(parameter, value);
         }
 
-        Written(o);
         // initialisers that use the parameters
         var caller = _frame;
         _frame = new Frame(caller, constructor, syntax, false) { This = Ref(o), LoopDepth = _loops.Count, GuardDepth = _guards.Count };
@@ -566,7 +567,7 @@ internal sealed partial class Walker
             else if (!all.Tags.IsEmpty)
             {
                 StoreInto(o, aggregated.With(objects: IdSet.Empty));
-                return Ref(o).Tagged(Elements(all.Tags));
+                return Ref(o).Tagged(ElementTags(all.Tags));
             }
             else
             {
@@ -594,10 +595,10 @@ internal sealed partial class Walker
             Absorb(model, aggregated);
         }
 
-        return Ref(model).Tagged(Elements(all.Tags)).Winning(all.Wins).Varying(all.Varies);
+        return Ref(model).Tagged(ElementTags(all.Tags)).Winning(all.Wins).Varying(all.Varies);
     }
 
-    private static IdSet Elements(IdSet tags) => tags.Where(t => Tag.LevelOf(t) == Level.Element);
+    private static IdSet ElementTags(IdSet tags) => tags.Where(t => Tag.LevelOf(t) == Level.Element);
 
     private bool SameShape(Value rows, ITypeSymbol type)
     {

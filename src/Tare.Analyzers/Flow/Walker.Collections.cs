@@ -115,7 +115,7 @@ internal sealed partial class Walker
             }
         }
 
-        Written(o);
+        Written(o, Elements);
     }
 
     /// <summary>A list that takes some rows and not others, by a condition or by the bounds of an index loop, is a part of them.</summary>
@@ -201,7 +201,7 @@ internal sealed partial class Walker
                 }
             }
 
-            Written(o);
+            Written(o, Elements);
         }
 
         return value;
@@ -237,6 +237,8 @@ internal sealed partial class Walker
             element = Tagged(element, IdSet.Of(Tag.Of(o.Rows.Id, Level.Element)));
         if (o.Per.IsEmpty)
             element = element.Varying(IdSet.Of(OwnOrigin(o).Id));
+        else if (!element.Objects.IsEmpty || !element.Closures.IsEmpty)
+            element = element.With(indexed: element.Indexed.Union(o.Per));
         return element;
     }
 
@@ -348,8 +350,16 @@ internal sealed partial class Walker
         var index = Value.Empty;
         foreach (var i in indices)
             index = index.Combine(Expression(i));
-        Value? number = indices.Count == 1 ? Expression(indices[0]) : null;
-        return ElementAt(collection, index, number, syntax, indices);
+        if (indices.Count > 1)
+        {
+            // a table: the first index goes down the rows, the others along one
+            var row = Expression(indices[0]);
+            var column = index.With(varies: index.Varies.Except(row.Varies));
+            var cell = ElementAt(collection, row, null, syntax, indices);
+            return cell.With(indexed: cell.Indexed.Union(column.Varies), wins: cell.Wins.Union(column.Wins));
+        }
+
+        return ElementAt(collection, index, index, syntax, indices);
     }
 
     private Value ElementAt(Value collection, Value index, Value? single, SyntaxNode syntax, IReadOnlyList<IOperation> indices)

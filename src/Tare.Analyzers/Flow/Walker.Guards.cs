@@ -93,10 +93,11 @@ internal sealed partial class Walker
         if (rows.IsEmpty)
             return null;
         var family = left.Varies.Union(right.Varies).Intersect(running);
+        var weak = left.Indexed.Union(right.Indexed).Intersect(running).Except(family);
         var rowFamily = IdSet.Empty;
         foreach (int r in rows)
             rowFamily = rowFamily.Union(_facts.Rows[r].Varies.Intersect(running));
-        bool straight = family.IsEmpty && rowFamily.IsEmpty;
+        bool straight = family.IsEmpty && weak.IsEmpty && rowFamily.IsEmpty;
         if (straight)
         {
             if (left.Sites.IsEmpty || right.Sites.IsEmpty || left.Sites.Overlaps(right.Sites) || !IsCandidate(value))
@@ -104,12 +105,13 @@ internal sealed partial class Walker
         }
 
         bool isScore = IsScoreOf(value, left) || IsScoreOf(value, right);
-        if (!straight && !isScore && !value.Varies.Overlaps(family) && !value.Indexed.Overlaps(family) && !VariesThroughObjects(value, family.Union(rowFamily)))
+        if (!straight && !isScore && !value.Varies.Overlaps(family) && !value.Indexed.Overlaps(family) && !value.Indexed.Overlaps(weak) && !value.Varies.Overlaps(weak) && !VariesThroughObjects(value, family.Union(rowFamily)))
             return null;
         if (Silent)
             return null;
         var choice = _facts.ChoiceAt(Place(comparison.Operation.Syntax), comparison.Frame, ChoiceKind.Comparison);
         choice.Family = choice.Family.Union(family);
+        choice.Weak = choice.Weak.Union(weak);
         choice.RowFamily = choice.RowFamily.Union(rowFamily);
         choice.Rows = choice.Rows.Union(rows);
         choice.Sites = choice.Sites.Union(left.Sites).Union(right.Sites);
@@ -117,12 +119,25 @@ internal sealed partial class Walker
         choice.Running = RunningOrigins();
         choice.IsPValue |= left.Has(Traits.PValue) && right.Has(Traits.PValue);
         if (straight)
-            choice.StraightCount = Math.Max(choice.StraightCount, left.Sites.Union(right.Sites).Count);
+            choice.StraightCount = Math.Max(choice.StraightCount, StraightCount(left.Wins, choice) + StraightCount(right.Wins, choice));
         // "left < right" with left the new score: lower wins; guards that keep the branch out turn it round
         bool leftIsNew = !left.Varies.IsEmpty && (right.Wins.Contains(choice.Id) || right.Varies.Count <= left.Varies.Count);
         choice.LowerWins = (comparison.LeftSmaller == leftIsNew) != (guard?.Negated ?? false);
         choice.ScoreName ??= (leftIsNew ? comparison.RightName ?? comparison.LeftName : comparison.LeftName ?? comparison.RightName);
         return choice;
+    }
+
+    /// <summary>How many straight-line candidates stand behind one side: itself, or those it already beat.</summary>
+    private int StraightCount(IdSet wins, Choice except)
+    {
+        int count = 1;
+        foreach (int id in wins)
+        {
+            if (id != except.Id)
+                count = Math.Max(count, _facts.Choices[id].StraightCount);
+        }
+
+        return count;
     }
 
     private static bool IsCandidate(Value value) =>
@@ -199,7 +214,7 @@ internal sealed partial class Walker
         choice.LowerWins = lower;
         choice.Running = running;
         if (family.IsEmpty && rowFamily.IsEmpty)
-            choice.StraightCount = Math.Max(choice.StraightCount, joined.Sites.Count);
+            choice.StraightCount = Math.Max(choice.StraightCount, StraightCount(a.Wins, choice) + StraightCount(b.Wins, choice));
         return joined.Winning(IdSet.Of(choice.Id)).With(traits: joined.Traits | Traits.Extreme);
     }
 
@@ -210,12 +225,14 @@ internal sealed partial class Walker
         if (rows.IsEmpty || Silent)
             return null;
         var family = key.Varies.Intersect(origins);
+        var weak = key.Indexed.Intersect(origins).Except(family);
         var rowFamily = IdSet.Empty;
         foreach (int r in rows)
             rowFamily = rowFamily.Union(_facts.Rows[r].Varies.Intersect(origins));
-        if (family.IsEmpty && rowFamily.IsEmpty)
+        if (family.IsEmpty && rowFamily.IsEmpty && weak.IsEmpty)
             return null;
         var choice = _facts.ChoiceAt(Place(place), _frame, kind);
+        choice.Weak = choice.Weak.Union(weak);
         if (kind == ChoiceKind.Call)
             choice.Kind = kind;
         choice.Family = choice.Family.Union(family);

@@ -6,6 +6,9 @@ namespace Tare.Analyzers.Flow;
 
 internal sealed partial class Walker
 {
+    private const string Elements = "[]";
+    private const string Contents = "()";
+
     /// <summary>Runs a body as a loop: twice, so that what one round leaves is seen by the next, then closes it.</summary>
     private void Loop(SyntaxNode syntax, IdSet origins, IdSet rows, Action body)
     {
@@ -19,7 +22,7 @@ internal sealed partial class Walker
             int before = _changes;
             body();
             _state = layer.Under!;
-            bool changed = Carry(layer, scope) || _changes != before;
+            bool changed = Carry(layer, scope) | CarryObjects(scope) || _changes != before;
             if (!changed || Spent)
                 break;
         }
@@ -55,6 +58,40 @@ internal sealed partial class Walker
         return changed;
     }
 
+    /// <summary>The state of an object that a loop changes differs from round to round: a network while it trains.</summary>
+    private bool CarryObjects(LoopScope scope)
+    {
+        bool changed = false;
+        foreach (var (o, member) in scope.Written)
+        {
+            if (o.Depth >= _loops.Count || o.Per.Overlaps(scope.Origins) && member == Elements)
+                continue;
+            switch (member)
+            {
+                case Elements:
+                    var element = o.Element.Varying(scope.Origins);
+                    changed |= !element.Same(o.Element);
+                    o.Element = element;
+                    break;
+                case Contents:
+                    var content = o.Content.Varying(scope.Origins);
+                    changed |= !content.Same(o.Content);
+                    o.Content = content;
+                    break;
+                default:
+                    if (o.Field(member) is { } field && !field.Varying(scope.Origins).Same(field))
+                    {
+                        o.Fields![member] = field.Varying(scope.Origins);
+                        changed = true;
+                    }
+
+                    break;
+            }
+        }
+
+        return changed;
+    }
+
     private bool IsDeclaredOutside(ISymbol symbol) =>
         _declaredAt.TryGetValue(symbol, out int depth) && depth < _loops.Count;
 
@@ -70,16 +107,8 @@ internal sealed partial class Walker
             _state.Set(pair.Key, CloseValue(now, scope.Origins, scope.Rows, scope.Syntax, symbolHash));
         }
 
-        foreach (var o in scope.Written)
+        foreach (var o in scope.Written.Select(w => w.Object).Distinct().ToArray())
             CloseObject(o, scope);
-        if (_loops.Count > 0)
-        {
-            foreach (var o in scope.Written)
-            {
-                if (o.Depth < _loops.Count)
-                    _loops[_loops.Count - 1].Written.Add(o);
-            }
-        }
     }
 
     private void CloseObject(HeapObject o, LoopScope scope)

@@ -92,7 +92,7 @@ internal sealed partial class Walker
         var rows = o.Rows is null ? IdSet.Empty : IdSet.Of(o.Rows.Id);
         if (o.IsCollection)
             rows = rows.Union(Tag.At(o.Element.Tags, Level.Element));
-        if (o.Rows is null && o.Element.Fields is not null)
+        if (o.IsCollection && o.Element.Fields is not null)
         {
             foreach (var field in o.Element.Fields.Values)
                 rows = rows.Union(Tag.At(field.Tags, Level.Element));

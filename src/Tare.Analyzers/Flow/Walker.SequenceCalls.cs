@@ -315,7 +315,9 @@ internal sealed partial class Walker
         foreach (int id in result.Objects)
         {
             var o = _facts.Objects[id];
-            o.Content = o.Content.Join(condition.With(compares: IdSet.Empty));
+            // which rows pass depends on a model, so what is counted of them is a quantity of the model
+            if (Tag.Has(condition.Tags, Level.Aggregate))
+                o.Content = o.Content.Join(condition.With(compares: IdSet.Empty));
             o.Count = null;
             foreach (int from in source.Objects)
             {
@@ -644,9 +646,9 @@ internal sealed partial class Walker
         if (source.Objects.Count == 1 && _facts.Objects[source.Objects.First()].Rows is { } r && !HoldsQuantities(o))
             o.Rows ??= r;
         // a vector of one row zipped with weights still belongs to that row
-        var within = Elements(source.Tags);
+        var within = ElementTags(source.Tags);
         foreach (var other in others)
-            within = within.Union(Elements(other.Tags));
+            within = within.Union(ElementTags(other.Tags));
         return Ref(o).Tagged(within);
     }
 
@@ -674,7 +676,7 @@ internal sealed partial class Walker
         }
 
         o.Count ??= parts.Select(SizeOf).Aggregate((double?)0, (a, b) => a + b);
-        return Ref(o).Tagged(Elements(source.Tags));
+        return Ref(o).Tagged(ElementTags(source.Tags));
     }
 
     private Value GroupBy(Value source, Value[] values, IdSet closures, SyntaxNode syntax, SyntaxNode named, ITypeSymbol type)
@@ -702,7 +704,7 @@ internal sealed partial class Walker
 
         group.Key = group.Key.Join(CloseValue(key, origins, IdSet.Empty, syntax, 5).Varying(IdSet.Of(own.Id)));
         StoreInto(groups, Ref(group));
-        return Ref(groups).Tagged(Elements(source.Tags));
+        return Ref(groups).Tagged(ElementTags(source.Tags));
     }
 
     private Value ToDictionary(IInvocationOperation invocation, Value source, Value[] values, SyntaxNode syntax, SyntaxNode named, ITypeSymbol type)
@@ -775,7 +777,7 @@ internal sealed partial class Walker
                 }
 
                 StoreInto(o, ElementOf(range, syntax));
-                Written(o);
+                Written(o, Elements);
                 continue;
             }
 

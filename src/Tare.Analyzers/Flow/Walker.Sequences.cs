@@ -40,7 +40,7 @@ internal sealed partial class Walker
         foreach (int id in instance.Objects)
         {
             var o = _facts.Objects[id];
-            if (!o.Content.Varies.IsEmpty || Tag.Has(o.Content.Tags, Level.Aggregate))
+            if (Tag.Has(o.Content.Tags, Level.Aggregate))
                 value = value.Join(CloseValue(o.Content, IdSet.Empty, RowsIn(o).Union(Tag.At(o.Content.Tags, Level.Element)), syntax, id));
         }
 

@@ -145,7 +145,7 @@ internal sealed partial class Walker
 
         public State Layer { get; set; } = null!;
 
-        public HashSet<HeapObject> Written { get; } = new();
+        public HashSet<(HeapObject Object, string Member)> Written { get; } = new();
 
         public SyntaxNode Syntax { get; set; } = null!;
 
