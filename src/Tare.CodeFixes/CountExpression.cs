@@ -97,13 +97,16 @@ internal static class CountExpression
             return false;
         if (MemberOf(family) == MemberOf(at))
         {
-            // a loop may declare what its header names; inside its body both are in scope
-            return SymbolEqualityComparer.Default.Equals(place.SymbolAt(family.SpanStart, name), here)
-                || here.DeclaringSyntaxReferences.Any(d => d.SyntaxTree == family.SyntaxTree && d.Span.Contains(family.Span));
+            // of two grids the place names the outer one, where the inner one need not be declared yet
+            var there = place.SymbolAt(family.SpanStart, name);
+            return there is null || !IsDeclaredBefore(there, family) || SymbolEqualityComparer.Default.Equals(there, here);
         }
 
-        return here is IFieldSymbol or IPropertySymbol && here.DeclaringSyntaxReferences.Any(d => d.SyntaxTree == family.SyntaxTree && d.GetSyntax().FullSpan.Contains(family.Span));
+        return here is IFieldSymbol or IPropertySymbol or IParameterSymbol { ContainingSymbol: IMethodSymbol { MethodKind: MethodKind.Constructor } } && here.DeclaringSyntaxReferences.Any(d => d.SyntaxTree == family.SyntaxTree && d.GetSyntax().FullSpan.Contains(family.Span));
     }
+
+    private static bool IsDeclaredBefore(ISymbol symbol, SyntaxNode family) =>
+        symbol is not ILocalSymbol || symbol.DeclaringSyntaxReferences.Any(d => d.SyntaxTree == family.SyntaxTree && d.Span.Start <= family.SpanStart);
 
     /// <summary>The collection grows, shrinks or is replaced inside the loop over the family.</summary>
     private static bool Changes(Place place, int position, IdentifierNameSyntax name, SyntaxNode? family)

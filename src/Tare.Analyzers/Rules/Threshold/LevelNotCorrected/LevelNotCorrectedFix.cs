@@ -145,7 +145,7 @@ public sealed class LevelNotCorrectedFix : DocumentFix
     {
         if (place.Fact("count") is { } known && !int.TryParse(known, out _))
             return null;
-        if (family is null || CountExpression.MemberOf(family) != CountExpression.MemberOf(at))
+        if (family is null)
             return null;
         ExpressionSyntax? through = null;
         for (SyntaxNode? node = at; node is not null && node != CountExpression.MemberOf(at); node = node.Parent)
@@ -159,7 +159,13 @@ public sealed class LevelNotCorrectedFix : DocumentFix
                 case LambdaExpressionSyntax { Parent: ArgumentSyntax { Parent.Parent: InvocationExpressionSyntax { Expression: MemberAccessExpressionSyntax called } } }:
                     found = called.Expression;
                     break;
-                case ForStatementSyntax or WhileStatementSyntax or DoStatementSyntax or ForEachVariableStatementSyntax or AnonymousFunctionExpressionSyntax or QueryExpressionSyntax or LocalFunctionStatementSyntax:
+                case ForEachVariableStatementSyntax loop:
+                    found = loop.Expression;
+                    break;
+                case QueryExpressionSyntax query when query.Body.Continuation is null && !query.Body.Clauses.Any(c => c is FromClauseSyntax or JoinClauseSyntax):
+                    found = query.FromClause.Expression;
+                    break;
+                case ForStatementSyntax or WhileStatementSyntax or DoStatementSyntax or AnonymousFunctionExpressionSyntax or QueryExpressionSyntax or LocalFunctionStatementSyntax:
                     return null;
                 default:
                     continue;
