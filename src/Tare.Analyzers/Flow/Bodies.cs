@@ -121,6 +121,7 @@ internal sealed class Bodies
         {
             TypeDeclarationSyntax => null,
             ParameterSyntax => null,
+            _ when Nesting.IsTooDeep(syntax) => null,
             _ => model.GetOperation(syntax, _cancellation),
         };
         switch (operation)
@@ -161,7 +162,7 @@ internal sealed class Bodies
                 PropertyDeclarationSyntax p => p.Initializer?.Value,
                 _ => null,
             };
-            if (value is not null && ModelOf(syntax.SyntaxTree).GetOperation(value, _cancellation) is { } operation)
+            if (value is not null && !Nesting.IsTooDeep(value) && ModelOf(syntax.SyntaxTree).GetOperation(value, _cancellation) is { } operation)
                 return new[] { operation };
         }
 
