@@ -23,6 +23,8 @@ internal sealed class Winner
         _renderer = new Renderer(scene);
     }
 
+    public Renderer Renderer => _renderer;
+
     /// <summary>Statements before a loop that fit training rows and that the loop depends on.</summary>
     public List<StatementSyntax> FitsBefore(StatementSyntax family)
     {
@@ -58,17 +60,8 @@ internal sealed class Winner
     {
         var model = _scene.Model;
         bool IsKnown(ExpressionSyntax e) => _renderer.Expressions.ContainsKey(Code.Key(e));
-        bool Depends(ExpressionSyntax value)
-        {
-            if (value is IdentifierNameSyntax name && IsLoopVariable(name, family))
-                return false;
-            var slice = new Slice(_scene, static _ => false);
-            slice.Need(value);
-            slice.Back(test, family);
-            return slice.Nodes.Append(value).Any(n => _scene.RowsIn(n).Any(r => r.Rows.Role == RowsRole.Test || (refit && r.Rows.Role == RowsRole.Training)))
-                || (refit && outside.Any(o => slice.Defines(o).Any(slice.IsNeeded)));
-        }
-
+        var dependence = new Dependence(_scene, test, family, refit, outside);
+        bool Depends(ExpressionSyntax value) => dependence.Of(value).Depends;
         var dependent = new List<Kept>();
         foreach (var one in kept)
         {
@@ -110,7 +103,7 @@ internal sealed class Winner
         string indent = Code.IndentOf(family);
         var scoreTarget = kept.FirstOrDefault(k => Code.Key(k.Target) == Code.Key(best));
         bool rename = best is IdentifierNameSyntax && scoreTarget is not null && model.GetSymbolInfo(best).Symbol is ILocalSymbol local && !IsAssignedAfter(local, family);
-        string? testScore = rename ? _scene.Names.Free(TestName(best, score)) : null;
+        string? testScore = rename ? _scene.Names.Free(TestName(best.ToString(), score)) : null;
         bool isVar = best is IdentifierNameSyntax && model.GetSymbolInfo(best).Symbol is ILocalSymbol l && l.DeclaringSyntaxReferences[0].GetSyntax().Parent is VariableDeclarationSyntax { Type.IsVar: true };
         string scoreType = isVar ? "var" : model.GetTypeInfo(best).Type!.ToMinimalDisplayString(model, test.SpanStart);
         var written = new HashSet<Kept>();
@@ -152,7 +145,7 @@ internal sealed class Winner
                 }
                 else
                 {
-                    name = _scene.Names.Free(_scene.Mentions(variable, RowsRole.Test) || symbol is ILocalSymbol { Type.SpecialType: not SpecialType.None } ? "test" + RowsName.Upper(Bare(symbol.Name)) : "winner", "winner" + RowsName.Upper(Bare(symbol.Name)));
+                    name = NameFor(symbol, variable.Initializer?.Value);
                 }
 
                 if (_renderer.Computed.Values.Contains(value) && target is null)
@@ -182,6 +175,14 @@ internal sealed class Winner
         return true;
     }
 
+    /// <summary>A name for a variable of the winner's turn.</summary>
+    public string NameFor(ISymbol symbol, ExpressionSyntax? value)
+    {
+        string bare = RowsName.Upper(Bare(symbol.Name));
+        bool onTest = (value is not null && _scene.Mentions(value, RowsRole.Test)) || symbol is ILocalSymbol { Type.SpecialType: not SpecialType.None };
+        return onTest ? _scene.Names.Free("test" + bare) : _scene.Names.Free("winner", "winner" + bare);
+    }
+
     private static IdentifierNameSyntax? IdentifierOf(ExpressionSyntax score) => score as IdentifierNameSyntax;
 
     private string Sure(ExpressionSyntax target)
@@ -193,15 +194,6 @@ internal sealed class Winner
             ILocalSymbol { Type: INamedTypeSymbol { OriginalDefinition.SpecialType: SpecialType.System_Nullable_T } } => target + ".Value",
             _ => target.ToString(),
         };
-    }
-
-    private bool IsLoopVariable(IdentifierNameSyntax name, StatementSyntax family)
-    {
-        if (_scene.Model.GetSymbolInfo(name).Symbol is not { DeclaringSyntaxReferences.Length: 1 } symbol)
-            return false;
-        var declared = symbol.DeclaringSyntaxReferences[0].GetSyntax();
-        return family.Span.Contains(declared.Span)
-            && (declared is ForEachStatementSyntax or ParameterSyntax || declared.Parent?.Parent is ForStatementSyntax || declared.FirstAncestorOrSelf<ForEachVariableStatementSyntax>(f => f.Variable.Span.Contains(declared.Span)) is not null);
     }
 
     /// <summary>A candidate's variables that the winner's turn needs and that nothing keeps are kept too.</summary>
@@ -265,7 +257,7 @@ internal sealed class Winner
     }
 
     /// <summary>A statement before the loop once more, as an assignment where it declared.</summary>
-    private IEnumerable<string>? Again(StatementSyntax fit)
+    public IEnumerable<string>? Again(StatementSyntax fit)
     {
         if (fit is ExpressionStatementSyntax)
             return new[] { _renderer.Text(fit) };
@@ -275,7 +267,7 @@ internal sealed class Winner
     }
 
     /// <summary>A refit that the code has already: a later variable that holds what the winner's fit computes.</summary>
-    private StatementSyntax? RefitOfTheirOwn(StatementSyntax family)
+    public StatementSyntax? RefitOfTheirOwn(StatementSyntax family)
     {
         StatementSyntax? last = null;
         foreach (var statement in Code.Siblings(family).SkipWhile(s => s != family).Skip(1))
@@ -294,7 +286,7 @@ internal sealed class Winner
         return last;
     }
 
-    private void RenameDeclared(SyntaxNode node)
+    public void RenameDeclared(SyntaxNode node)
     {
         foreach (var inner in node.DescendantNodesAndSelf())
         {
@@ -341,9 +333,9 @@ internal sealed class Winner
         _edits.Insert(node.FullSpan.End, (ends ? "" : _scene.NewLine) + text);
     }
 
-    private static string TestName(ExpressionSyntax best, ExpressionSyntax score)
+    public static string TestName(string best, ExpressionSyntax score)
     {
-        string bare = Bare(best.ToString());
+        string bare = Bare(best);
         if (bare.Length == 0)
             bare = Bare(score is MemberAccessExpressionSyntax member ? member.Name.Identifier.ValueText : score is IdentifierNameSyntax name ? name.Identifier.ValueText : "");
         return "test" + RowsName.Upper(bare.Length == 0 ? "score" : bare);
