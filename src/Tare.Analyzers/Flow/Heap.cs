@@ -47,6 +47,9 @@ internal sealed class HeapObject
 
     public string? CountText { get; set; }
 
+    /// <summary>What the size differs with: `new double[features]`, `Range(0, factors)`.</summary>
+    public IdSet SizeVaries { get; set; }
+
     /// <summary>Places that add one element each, outside any loop.</summary>
     public HashSet<SyntaxNode>? AddSites { get; set; }
 
@@ -60,8 +63,27 @@ internal sealed class HeapObject
     /// <summary>A window that moves with the rows: belongs to one row each time.</summary>
     public bool IsWindow { get; set; }
 
+    /// <summary>Called p-values: its numbers are.</summary>
+    public bool HoldsPValues { get; set; }
+
     /// <summary>A half of a split by an API: the part of <see cref="Rows"/> that a property gives.</summary>
     public bool IsSplit { get; set; }
+
+    /// <summary>Something else holds it, so that making another at the same place must not take its contents away.</summary>
+    public bool Escaped { get; set; }
+
+    /// <summary>Made anew: what the one before it held is gone, unless that one is still held.</summary>
+    public void Renew()
+    {
+        if (Escaped)
+            return;
+        Element = Value.Empty;
+        Key = Value.Empty;
+        Content = Value.Empty;
+        Fields?.Clear();
+        SortKey = null;
+        SortPlace = null;
+    }
 
     public Value? Field(string name) => Fields is not null && Fields.TryGetValue(name, out var value) ? value : null;
 

@@ -37,10 +37,10 @@ internal sealed class Reading
                 continue;
             if (role == Role.Test && evidence != Evidence.Declared && _roles.UntouchedScoredLater(choice, rows))
                 role = Role.Validation;
-            if (role is Role.Test or Role.Unsplit && IsAveragedOver(choice, rows))
-                role = Role.Validation;
             if (role == Role.Unsplit && _roles.FittedByFamily(choice, rows))
                 continue;
+            if (role is Role.Test or Role.Unsplit && IsAveragedOver(choice, rows))
+                role = Role.Validation;
             if (best is null || Rank(role) > Rank(best.Role))
                 best = new ChoiceRows(rows, role, evidence, family);
         }
@@ -217,7 +217,7 @@ internal sealed class Reading
     {
         foreach (int r in Facts.Origins[id].Rows)
         {
-            if (r == rows.Id || _roles.Related(r, rows.Id) || ParallelTo(r, rows))
+            if (r == rows.Id || _roles.Related(r, rows.Id) || ParallelTo(r, rows) || _roles.Of(r) is { Role: Role.Training, Evidence: not Evidence.None })
                 return false;
         }
 

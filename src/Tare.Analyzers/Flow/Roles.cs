@@ -96,7 +96,7 @@ internal sealed class Roles
     {
         foreach (var meeting in _facts.Meetings)
         {
-            if (meeting.Varies.Overlaps(choice.Family) && _facts.Rows[meeting.Fitted].Root == rows.Root && _facts.Rows[meeting.Scored].Root == rows.Root
+            if (_facts.Rows[meeting.Fitted].Root == rows.Root && _facts.Rows[meeting.Scored].Root == rows.Root
                 && (meeting.Fitted == meeting.Scored || Related(meeting.Fitted, meeting.Scored)) && Related(meeting.Scored, rows.Id))
                 return true;
         }
@@ -171,7 +171,8 @@ internal sealed class Roles
             return (Role.Test, Evidence.Known);
         if (rows.Parent is not null)
             return parent.Role is Role.Unknown ? parent : (parent.Role, Evidence.None);
-        return rows.Source is Source.Parameter or Source.Field ? (Role.Unknown, Evidence.None) : (Role.Unsplit, Evidence.None);
+        // rows that a caller hands over without a word: unsplit as far as this code shows
+        return (Role.Unsplit, Evidence.None);
     }
 
     private bool FittedMore(RowSet rows) =>

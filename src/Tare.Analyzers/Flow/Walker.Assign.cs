@@ -113,6 +113,7 @@ internal sealed partial class Walker
         value = Settle(depth, value, syntax, member, survives);
         value = Named(value, member.Name, member, type, syntax);
         var stored = value.Varying(instance.Varies.Intersect(RunningOrigins()));
+        Hold(value);
         foreach (int id in instance.Objects)
         {
             var o = _facts.Objects[id];
@@ -161,8 +162,21 @@ internal sealed partial class Walker
         return value;
     }
 
+    /// <summary>Objects that something else now holds.</summary>
+    private void Hold(Value value)
+    {
+        foreach (int id in value.Objects)
+            _facts.Objects[id].Escaped = true;
+        if (value.Fields is not null)
+        {
+            foreach (var field in value.Fields.Values)
+                Hold(field);
+        }
+    }
+
     private void Absorb(HeapObject o, Value value)
     {
+        Hold(value);
         var joined = o.Content.Join(Deep(value));
         if (!joined.Same(o.Content))
         {

@@ -14,9 +14,9 @@ internal sealed partial class Walker
         var method = invocation.TargetMethod;
         var instance = Expression(invocation.Instance);
         if (method.MethodKind == MethodKind.DelegateInvoke)
-            return InvokeDelegate(instance, ArgumentValues(invocation), invocation.Syntax, method.ReturnType);
+            return NamedTraits(InvokeDelegate(instance, ArgumentValues(invocation), invocation.Syntax, method.ReturnType), (invocation.Instance is null ? null : NameOf(invocation.Instance)) ?? "", method.ReturnType);
         if (method.MethodKind == MethodKind.LocalFunction)
-            return CallWithArguments(method, Value.Empty, invocation.Arguments, invocation.Syntax);
+            return NamedTraits(CallWithArguments(method, Value.Empty, invocation.Arguments, invocation.Syntax), method.Name, method.ReturnType);
         if (Sequence(invocation, method, instance) is { } sequence)
             return sequence;
         if (_catalogue.TryGet(method, out var entry))
@@ -326,6 +326,7 @@ internal sealed partial class Walker
         if (type is { TypeKind: TypeKind.Delegate } && creation.Arguments.Length == 1)
             return Expression(creation.Arguments[0].Value);
         var o = _facts.ObjectAt(creation.Syntax, _frame.Chain, type, _loops.Count);
+        o.Renew();
         o.IsCollection |= RowsTypes.IsCollection(type);
         var self = Ref(o);
         if (constructor is not null && type is { DeclaringSyntaxReferences.Length: > 0 })
@@ -382,6 +383,7 @@ internal sealed partial class Walker
         o.Rows ??= from.Rows;
         o.Own ??= from.Own;
         o.Count ??= from.Count;
+        o.SizeVaries = o.SizeVaries.Union(from.SizeVaries);
         o.Content = o.Content.Join(from.Content);
         o.SortKey ??= from.SortKey;
         o.SortPlace ??= from.SortPlace;
@@ -583,6 +585,7 @@ internal sealed partial class Walker
         }
 
         var model = _facts.ObjectAt(syntax, _frame.Chain, type, _loops.Count, 4);
+        model.Renew();
         if (whole.Count > 0 || !all.IsEmpty)
         {
             if (!whole.IsEmpty)
@@ -667,6 +670,8 @@ internal sealed partial class Walker
                 result = result.Tagged(IdSet.Of(Tag.Of(o.Rows.Id, Level.Whole)));
             if (!o.Content.IsEmpty)
                 result = result.Combine(DeepInto(o.Content, depth - 1, seen));
+            if (!o.SizeVaries.IsEmpty)
+                result = result.Varying(o.SizeVaries);
             if (!o.Element.IsEmpty)
             {
                 var element = DeepInto(o.Element, depth - 1, seen);

@@ -22,10 +22,12 @@ internal sealed partial class Walker
         if (array.Initializer is not null)
             return Literal(array.Initializer.ElementValues, array.Syntax, array.Type);
         var o = NewCollection(array.Syntax, array.Type);
+        o.Renew();
         foreach (var size in array.DimensionSizes)
         {
             var value = Expression(size);
             o.Count ??= value.Number;
+            o.SizeVaries = o.SizeVaries.Union(value.Varies);
         }
 
         return Ref(o);
@@ -34,6 +36,7 @@ internal sealed partial class Walker
     private Value Literal(IReadOnlyList<IOperation> elements, SyntaxNode syntax, ITypeSymbol? type)
     {
         var o = NewCollection(syntax, type);
+        o.Renew();
         double count = 0;
         bool counted = true;
         // a very long literal says no more than its beginning does
@@ -75,14 +78,17 @@ internal sealed partial class Walker
             count++;
         }
 
-        if (counted && o.Count is null)
+        if (counted && count > 0 && o.Count is null)
             o.Count = count;
         return Ref(o);
     }
 
     private void StoreInto(HeapObject o, Value value)
     {
+        Hold(value);
         var joined = o.Element.Join(value);
+        if (o.HoldsPValues && joined.Fields is null && joined.Objects.IsEmpty)
+            joined = joined.With(traits: joined.Traits | Traits.PValue);
         if (!joined.Same(o.Element))
         {
             o.Element = joined;
@@ -188,6 +194,8 @@ internal sealed partial class Walker
                 _changes++;
             }
 
+            if (per.IsEmpty && RunningOrigins(o.Depth).IsEmpty && !(o.Type is IArrayTypeSymbol))
+                (o.AddSites ??= new HashSet<SyntaxNode>()).Add(syntax);
             if (o.Rows is null && !o.IsWindow && !per.IsEmpty)
                 PartByCondition(o, value, syntax);
             StoreInto(o, value);
@@ -235,6 +243,8 @@ internal sealed partial class Walker
             element = element.Join(o.Content);
         if (o.Rows is not null)
             element = Tagged(element, IdSet.Of(Tag.Of(o.Rows.Id, Level.Element)));
+        if (!o.SizeVaries.IsEmpty)
+            element = element.Varying(o.SizeVaries);
         if (o.Per.IsEmpty)
             element = element.Varying(IdSet.Of(OwnOrigin(o).Id));
         else if (!element.Objects.IsEmpty || !element.Closures.IsEmpty)
@@ -345,7 +355,7 @@ internal sealed partial class Walker
     /// <summary>`collection[i]`: an index that a running loop moves reads every element in turn.</summary>
     private Value IndexInto(Value collection, IReadOnlyList<IOperation> indices, SyntaxNode syntax, ITypeSymbol? type)
     {
-        if (indices.Count == 1 && indices[0] is IRangeOperation range)
+        if (indices.Count == 1 && RangeIn(indices[0]) is { } range)
             return SliceByRange(collection, range, syntax, type);
         var index = Value.Empty;
         foreach (var i in indices)
@@ -361,6 +371,16 @@ internal sealed partial class Walker
 
         return ElementAt(collection, index, index, syntax, indices);
     }
+
+    /// <summary>A range, as such or converted to a library's own index type.</summary>
+    private static IRangeOperation? RangeIn(IOperation index) => index switch
+    {
+        IRangeOperation range => range,
+        IConversionOperation conversion => RangeIn(conversion.Operand),
+        IArrayCreationOperation { Initializer.ElementValues: { Length: > 0 } values } => RangeIn(values[0]),
+        _ when CollectionExpression.IsOne(index) && CollectionExpression.Elements(index) is { Count: > 0 } elements => RangeIn(elements[0]),
+        _ => null,
+    };
 
     private Value ElementAt(Value collection, Value index, Value? single, SyntaxNode syntax, IReadOnlyList<IOperation> indices)
     {
@@ -386,6 +406,8 @@ internal sealed partial class Walker
             var element = o.Element.Join(o.Content);
             if (o.Rows is not null)
                 element = Tagged(element, IdSet.Of(Tag.Of(o.Rows.Id, Level.Element)));
+            if (!o.SizeVaries.IsEmpty)
+                element = element.Varying(o.SizeVaries);
             MoveThrough(collection, o, index);
             var moved = index.Varies.Union(index.Indexed);
             bool throughRows = !RowsIn(o).IsEmpty || Tag.Has(collection.Tags, Level.Element);
@@ -441,8 +463,7 @@ internal sealed partial class Walker
 
             if (!o.Per.IsEmpty && !random && !scope.Origins.ContainsAll(o.Per) && !o.Per.Overlaps(RunningOrigins()))
                 scope.Origins = scope.Origins.Union(o.Per);
-            if (random)
-                break;
+            break;
         }
     }
 
@@ -485,9 +506,12 @@ internal sealed partial class Walker
         bool self = key.Sites.Equals(o.Element.Sites) && !key.Sites.IsEmpty && o.Element.Fields is null && o.Element.Objects.IsEmpty;
         var choice = ChoiceByKey(o.SortPlace ?? syntax, origins, key, self ? ChoiceKind.Extreme : ChoiceKind.Call, o.Descending == last, null);
         var element = ElementOf(o);
-        element = element.With(varies: element.Varies.Except(origins), fields: element.Fields);
-        if (key.Has(Traits.PValue))
-            element = element.With(traits: element.Traits);
+        // which one comes first depends on all of them
+        var rows = RowsThrough(collection, o).Where(r => !IsRunning(r));
+        element = CloseValue(element, origins, rows, syntax, 4);
+        var order = key.With(tags: Tag.Move(key.Tags, Level.Element, Level.Aggregate, rows.Contains));
+        if (!rows.IsEmpty)
+            element = Tagged(element, order.Tags);
         return (choice is null ? element : element.Winning(IdSet.Of(choice.Id))).Tagged(collection.Tags).Winning(collection.Wins);
     }
 }

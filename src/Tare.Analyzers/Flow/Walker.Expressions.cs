@@ -56,7 +56,7 @@ internal sealed partial class Walker
             case ICompoundAssignmentOperation compound:
                 return CompoundAssign(compound);
             case IIncrementOrDecrementOperation step:
-                var stepped = Implied(Expression(step.Target).Data());
+                var stepped = Counted(Expression(step.Target).Data());
                 Assign(step.Target, stepped, step.Syntax, survives: false);
                 return stepped;
             case ICoalesceAssignmentOperation coalesce:
@@ -229,7 +229,7 @@ internal sealed partial class Walker
     private Value ReadMember(Value instance, string name, ISymbol member, ITypeSymbol type)
     {
         if (instance.Fields is not null && instance.Fields.TryGetValue(name, out var held))
-            return held.Winning(instance.Wins).Varying(instance.Varies);
+            return held.Winning(instance.Wins).Varying(instance.Varies).Tagged(instance.Tags.Where(t => Tag.LevelOf(t) == Level.Aggregate));
         var result = Value.Empty;
         bool found = false;
         foreach (int id in instance.Objects)
@@ -257,6 +257,13 @@ internal sealed partial class Walker
                 o.Store(name, unseen);
                 result = unseen;
             }
+        }
+
+        if (Tag.Has(instance.Tags, Level.Aggregate) && Tag.Has(result.Tags, Level.Element))
+        {
+            // a row picked by looking at all of them: what it holds depends on all
+            var over = WithAncestors(Tag.At(instance.Tags, Level.Aggregate).Except(Tag.At(instance.Tags, Level.Element)));
+            result = result.With(tags: Tag.Move(result.Tags, Level.Element, Level.Aggregate, over.Contains));
         }
 
         if (!instance.Tags.IsEmpty || !instance.Varies.IsEmpty || !instance.Wins.IsEmpty || !instance.Indexed.IsEmpty)
@@ -416,7 +423,7 @@ internal sealed partial class Walker
         var value = RowsTypes.IsScalar(compound.Type) ? old.Combine(by) : Typed(Deep(old).Combine(Deep(by)), compound.Type, compound.Syntax, Value.Empty);
         if (compound.OperatorKind == BinaryOperatorKind.Divide && (IsLevel(old) || old.Has(Traits.NamedLevel)) && !IsHalf(by))
             value = value.With(traits: value.Traits | Traits.Corrected);
-        return Assign(compound.Target, value, compound.Syntax, survives: false);
+        return Assign(compound.Target, by.Number is not null ? Counted(value) : value, compound.Syntax, survives: false);
     }
 
     private Value Tuple(ITupleOperation tuple)
@@ -569,7 +576,7 @@ internal sealed partial class Walker
             if (arm.Guard is not null)
                 condition = condition.Combine(Expression(arm.Guard)) is var c ? c : condition;
             Value value;
-            using (Guarded(condition.Combine(subject), choice.Value, negated: false))
+            using (Guarded(condition.Combine(Deep(subject)), choice.Value, negated: false))
                 value = Expression(arm.Value);
             value = ConditionTags(value, Deep(subject));
             result = first ? value : result.Join(value);

@@ -34,11 +34,51 @@ internal sealed partial class Walker
         for (int i = fromGuard; i < _guards.Count; i++)
         {
             var condition = _guards[i].Condition;
-            if (Tag.Has(condition.Tags, Level.Element))
+            if (IsOfOneRow(condition))
             {
                 value = value.With(
                     tags: value.Tags.Union(condition.Tags), varies: value.Varies.Union(condition.Varies), indexed: value.Indexed.Union(condition.Indexed),
                     sites: value.Sites.Union(condition.Sites), wins: value.Wins.Union(condition.Wins), models: value.Models.Union(condition.Models));
+            }
+        }
+
+        return value;
+    }
+
+    /// <summary>The condition is about one row at a time: a loop that is running goes through its rows.</summary>
+    private bool IsOfOneRow(Value condition)
+    {
+        foreach (int tag in condition.Tags)
+        {
+            if (Tag.LevelOf(tag) == Level.Element && IsRunning(Tag.Rows(tag)))
+                return true;
+        }
+
+        return false;
+    }
+
+    private bool IsRunning(int rows)
+    {
+        foreach (var scope in _loops)
+        {
+            if (scope.Rows.Contains(rows) || Related(scope.Rows, rows))
+                return true;
+        }
+
+        return false;
+    }
+
+    /// <summary>A count of outcomes depends on what was compared, quantities included: a permutation test counts them.</summary>
+    private Value Counted(Value value)
+    {
+        for (int i = _frame.GuardDepth; i < _guards.Count; i++)
+        {
+            var condition = _guards[i].Condition;
+            bool innermost = i == _guards.Count - 1 && !IsLoopCondition(_guards[i].Syntax) && _guards[i].LoopDepth == _loops.Count;
+            if (innermost && !condition.Compares.IsEmpty || IsOfOneRow(condition))
+            {
+                value = value.With(
+                    tags: value.Tags.Union(condition.Tags), varies: value.Varies.Union(condition.Varies), indexed: value.Indexed.Union(condition.Indexed), sites: value.Sites.Union(condition.Sites));
             }
         }
 
@@ -174,7 +214,7 @@ internal sealed partial class Walker
         foreach (int id in condition.Compares)
         {
             var comparison = _facts.Comparisons[id];
-            if (comparison.Equality || (IsPlainText(yes) && IsPlainText(no)))
+            if (comparison.Equality || (IsPlainText(yes) && IsPlainText(no) && conditional.Parent is not (IVariableInitializerOperation or ISimpleAssignmentOperation or IReturnOperation)))
                 continue;
             var probe = joined.Number is null && joined.IsEmpty ? new Value { Traits = Traits.Text } : joined;
             if (Decide(comparison, 0, probe, null) is { } choice)
@@ -186,8 +226,8 @@ internal sealed partial class Walker
 
     private static bool IsPlainText(Value value) => value.Has(Traits.Text) && value.Tags.IsEmpty && value.Objects.IsEmpty && value.Varies.IsEmpty;
 
-    private static Value ConditionTags(Value value, Value condition) =>
-        Tag.Has(condition.Tags, Level.Element)
+    private Value ConditionTags(Value value, Value condition) =>
+        IsOfOneRow(condition)
             ? value.With(
                 tags: value.Tags.Union(condition.Tags), varies: value.Varies.Union(condition.Varies), indexed: value.Indexed.Union(condition.Indexed),
                 sites: value.Sites.Union(condition.Sites), wins: value.Wins.Union(condition.Wins))
@@ -269,7 +309,7 @@ internal sealed partial class Walker
         bool order = kind is BinaryOperatorKind.LessThan or BinaryOperatorKind.LessThanOrEqual or BinaryOperatorKind.GreaterThan or BinaryOperatorKind.GreaterThanOrEqual;
         if (!order || Silent)
             return;
-        bool leftIsP = left.Has(Traits.PValue), rightIsP = right.Has(Traits.PValue);
+        bool leftIsP = IsP(left, right), rightIsP = IsP(right, left);
         if (leftIsP == rightIsP)
             return;
         var p = leftIsP ? left : right;
@@ -285,6 +325,8 @@ internal sealed partial class Walker
         family = family.Union(p.Over);
         if (family.IsEmpty)
             return;
+        if (IsLoopConditionOf(operation, family))
+            return;
         bool less = kind is BinaryOperatorKind.LessThan or BinaryOperatorKind.LessThanOrEqual;
         bool significantWhenTrue = less == leftIsP;
         var test = new LevelTest(operation.Syntax, p, level, family, _frame, NameOf(leftIsP ? leftOperation : rightOperation), NameOf(levelOperation), _facts.Order++)
@@ -293,6 +335,28 @@ internal sealed partial class Walker
             Kept = true,
         };
         _facts.Test(test);
+    }
+
+    /// <summary>A p-value, or a tail probability held against something as small as a level.</summary>
+    private static bool IsP(Value value, Value other) => value.Has(Traits.PValue) || value.Has(Traits.Tail) && other.Number is > 0 and <= 0.1;
+
+    /// <summary>`while (p &gt;= 0.05)`: one test repeated on more rows, not a family.</summary>
+    private bool IsLoopConditionOf(IOperation comparison, IdSet family)
+    {
+        foreach (int id in family)
+        {
+            var condition = _facts.Origins[id].Syntax switch
+            {
+                WhileStatementSyntax loop => loop.Condition,
+                DoStatementSyntax loop => loop.Condition,
+                ForStatementSyntax loop => loop.Condition,
+                _ => null,
+            };
+            if (condition is not null && condition.Span.Contains(comparison.Syntax.Span) && condition.SyntaxTree == comparison.Syntax.SyntaxTree)
+                return true;
+        }
+
+        return false;
     }
 
     private static bool IsLevel(Value level) =>

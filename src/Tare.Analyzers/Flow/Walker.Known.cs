@@ -16,7 +16,8 @@ internal sealed partial class Walker
         if (entry.Effect == CatalogueEffect.Reports)
         {
             Report(entry, method, instance, invocation);
-            return Value.Empty;
+            // what answers a request depends on what was sent
+            return method.ReturnsVoid || RowsTypes.IsTask(method.ReturnType, out var answer) && answer is null ? Value.Empty : ByArguments(instance, ImmutableArray.Create(arguments), method.ReturnType, invocation.Syntax);
         }
 
         if (entry.Effect == CatalogueEffect.Nothing)
@@ -74,7 +75,7 @@ internal sealed partial class Walker
         switch (entry.Effect)
         {
             case CatalogueEffect.Nothing:
-                return symbol.ContainingType?.Name is "Random" or "RandomNumberGenerator" ? new Value { Traits = Traits.Random } : Value.Empty;
+                return symbol.ContainingType?.Name is "Random" or "RandomNumberGenerator" ? new Value { Traits = Traits.Random, Varies = Deep(instance).Varies } : Value.Empty;
             case CatalogueEffect.Loads:
                 return Load(entry, method, instance, arguments, syntax, type);
             case CatalogueEffect.Passes:
@@ -125,6 +126,13 @@ internal sealed partial class Walker
     {
         var all = Gather(instance, arguments);
         var o = NewCollection(syntax, RowsTypes.IsTask(type, out var result) ? result : type);
+        if (Tag.At(all.Tags, Level.Element).Where(r => _facts.Rows[r].Root.Source == Source.Loaded) is { IsEmpty: false })
+        {
+            // one file a row: what it holds belongs to that row
+            StoreInto(o, all.With(objects: IdSet.Empty));
+            return Ref(o).Tagged(ElementTags(all.Tags)).Winning(all.Wins);
+        }
+
         if (o.Rows is null)
         {
             o.Rows = _facts.NewRows(Source.Loaded, null, syntax);
@@ -315,6 +323,7 @@ internal sealed partial class Walker
         }
 
         var o = _facts.ObjectAt(syntax, _frame.Chain, type, _loops.Count, 4);
+        o.Renew();
         if (RowsTypes.IsCollection(type))
         {
             o.IsCollection = true;

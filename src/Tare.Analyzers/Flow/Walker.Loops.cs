@@ -18,12 +18,13 @@ internal sealed partial class Walker
         {
             var layer = new State(_state);
             scope.Layer = layer;
+            scope.IsFirst = pass == 0;
             _state = layer;
             int before = _changes;
             body();
             _state = layer.Under!;
             bool changed = Carry(layer, scope) | CarryObjects(scope) || _changes != before;
-            if (!changed || Spent)
+            if ((!changed && !scope.Again) || Spent)
                 break;
         }
 
@@ -103,8 +104,25 @@ internal sealed partial class Walker
             var now = _state.Get(pair.Key);
             if (now is null)
                 continue;
+            if (!scope.Bound.IsEmpty)
+                now = now.Varying(scope.Bound);
             int symbolHash = SymbolEqualityComparer.Default.GetHashCode(pair.Key);
             _state.Set(pair.Key, CloseValue(now, scope.Origins, scope.Rows, scope.Syntax, symbolHash));
+        }
+
+        if (!scope.Bound.IsEmpty)
+        {
+            foreach (var (o, member) in scope.Written.ToArray())
+            {
+                if (o.Depth > _loops.Count)
+                    continue;
+                if (member == Elements)
+                    o.Element = o.Element.Varying(scope.Bound);
+                else if (member == Contents)
+                    o.Content = o.Content.Varying(scope.Bound);
+                else if (o.Field(member) is { } field)
+                    o.Fields![member] = field.Varying(scope.Bound);
+            }
         }
 
         foreach (var o in scope.Written.Select(w => w.Object).Distinct().ToArray())
@@ -198,9 +216,16 @@ internal sealed partial class Walker
         own.Name ??= loop.Locals.Length > 0 ? loop.Locals[0].Name : null;
         own.Size ??= Counting.For(loop, NumberOf);
         own.CountText ??= Counting.ForText(loop);
+        foreach (var local in loop.Locals)
+        {
+            if (loop.AtLoopBottom.Any(step => step.DescendantsAndSelf().Any(d => d is ILocalReferenceOperation r && SymbolEqualityComparer.Default.Equals(r.Local, local))))
+                _state.Set(local, (_state.Get(local) ?? Value.Empty).Join(new Value { Varies = IdSet.Of(own.Id) }));
+        }
+
         Loop(loop.Syntax, IdSet.Of(own.Id), IdSet.Empty, () =>
         {
             var condition = loop.Condition is null ? Value.Empty : Expression(loop.Condition);
+            Bounded(condition);
             using (Guarded(condition, loop.Condition ?? loop, negated: false))
                 Statement(loop.Body);
             foreach (var after in loop.AtLoopBottom)
@@ -217,6 +242,7 @@ internal sealed partial class Walker
             if (loop.ConditionIsTop && loop.Condition is not null)
             {
                 var condition = Expression(loop.Condition);
+                Bounded(condition);
                 using (Guarded(condition, loop.Condition, negated: false))
                     Statement(loop.Body);
             }
@@ -224,9 +250,16 @@ internal sealed partial class Walker
             {
                 Statement(loop.Body);
                 if (loop.Condition is not null)
-                    Expression(loop.Condition);
+                    Bounded(Expression(loop.Condition));
             }
         });
+    }
+
+    /// <summary>How often a loop runs may itself differ between candidates: a number of epochs, of trees, of lags.</summary>
+    private void Bounded(Value condition)
+    {
+        var scope = _loops[_loops.Count - 1];
+        scope.Bound = scope.Bound.Union(condition.Varies.Except(scope.Origins));
     }
 
     private double? NumberOf(IOperation operation)

@@ -26,6 +26,12 @@ internal sealed partial class Walker
     {
         var declared = RoleAttributes.RoleOf(symbol, o.Type);
         var role = _vocabulary.RoleOf(name, out bool isEval);
+        if (o.IsCollection && !o.HoldsPValues && Vocabulary.SaysPValue(name))
+        {
+            o.HoldsPValues = true;
+            StoreInto(o, Value.Empty);
+        }
+
         if (o.Rows is null)
         {
             if (role == Role.Unknown && declared == Role.Unknown)
@@ -69,7 +75,11 @@ internal sealed partial class Walker
     }
 
     /// <summary>The elements are scores or models, not rows.</summary>
-    private static bool HoldsQuantities(HeapObject o) => Tag.Has(o.Element.Tags, Level.Aggregate) && !Tag.Has(o.Element.Tags, Level.Element);
+    private bool HoldsQuantities(HeapObject o)
+    {
+        var element = Deep(o.Element, 3);
+        return Tag.Has(element.Tags, Level.Aggregate) && !Tag.Has(element.Tags, Level.Element);
+    }
 
     private RowSet EnsureRows(HeapObject o, SyntaxNode syntax)
     {
@@ -172,9 +182,9 @@ internal sealed partial class Walker
                 continue;
             rows ??= EnsureRows(o, syntax);
             var running = bounds.Varies.Union(bounds.Indexed).Intersect(RunningOrigins());
-            if (OverRows(running, rows))
+            n.IsWindow = OverRows(running, rows) || IsTentative(running);
+            if (n.IsWindow)
             {
-                n.IsWindow = true;
                 n.Element = n.Element.Tagged(IdSet.Of(Tag.Of(rows.Id, Level.Element)));
                 continue;
             }
@@ -193,6 +203,22 @@ internal sealed partial class Walker
             Objects = result, Tags = collection.Tags, Varies = collection.Varies.Union(withinRow ? bounds.Varies : IdSet.Empty), Wins = collection.Wins,
             Sites = collection.Sites, Indexed = collection.Indexed,
         };
+    }
+
+    /// <summary>Bounds that move with an index loop in its first round: whether it goes through the rows shows by its end.</summary>
+    private bool IsTentative(IdSet running)
+    {
+        bool tentative = false;
+        foreach (var scope in _loops)
+        {
+            if (scope.IsFirst && scope.Syntax is ForStatementSyntax or WhileStatementSyntax or DoStatementSyntax && running.Overlaps(scope.Origins))
+            {
+                scope.Again = true;
+                tentative = true;
+            }
+        }
+
+        return tentative;
     }
 
     private static Value Retag(Value value, int from, int to)

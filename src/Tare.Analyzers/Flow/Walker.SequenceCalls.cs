@@ -153,12 +153,12 @@ internal sealed partial class Walker
                 foreach (int id in top.Objects)
                 {
                     var o = _facts.Objects[id];
-                    var rows = RowsIn(o);
+                    var rows = RowsThrough(source, o);
                     // which elements are taken depends on the key of all of them, and on how many are asked for
                     var key = order.Combine(values[0]);
                     var closed = key.With(tags: Tag.Move(key.Tags, Level.Element, Level.Aggregate, rows.Contains), varies: key.Varies.Except(Per(o)));
                     o.Content = o.Content.Join(closed.With(traits: Traits.None));
-                    StoreInto(o, o.Element.With(tags: o.Element.Tags.Union(closed.Tags), varies: o.Element.Varies.Union(closed.Varies)));
+                    StoreInto(o, o.Element.With(tags: o.Element.Tags.Union(closed.Tags), varies: o.Element.Varies.Union(closed.Varies), wins: o.Element.Wins.Union(closed.Wins)));
                     if (values[0].Number is not 1)
                         o.Count = values[0].Number;
                 }
@@ -205,6 +205,7 @@ internal sealed partial class Walker
             o.Per = o.Per.Union(from.Per);
             o.Own ??= from.Per.IsEmpty ? OwnOrigin(from) : null;
             o.Count ??= from.Count;
+            o.SizeVaries = o.SizeVaries.Union(from.SizeVaries);
             o.Rows ??= from.Rows;
             o.IsWindow = from.IsWindow;
             o.Content = o.Content.Join(from.IsCollection ? from.Content : Value.Empty);
@@ -302,7 +303,7 @@ internal sealed partial class Walker
     private Value Where(IInvocationOperation invocation, Value source, IdSet closures, SyntaxNode syntax, SyntaxNode named, ITypeSymbol type, int at)
     {
         var condition = Map(source, closures, syntax, named);
-        var lambda = invocation.Arguments.FirstOrDefault(a => a.Parameter?.Ordinal == at)?.Value.Syntax ?? syntax;
+        var lambda = Predicate(closures) ?? invocation.Arguments.FirstOrDefault(a => a.Parameter?.Ordinal == at)?.Value.Syntax ?? syntax;
         var (key, other) = PredicateKey(lambda);
         // `Where(r => r.Score == best)`: the choice fell when the extreme was found
         var equal = EqualWinner(condition);
@@ -328,6 +329,18 @@ internal sealed partial class Walker
         }
 
         return result.Winning(equal);
+    }
+
+    /// <summary>A predicate that only calls a function handed over, or is one: the text of that function tells the parts apart.</summary>
+    private SyntaxNode? Predicate(IdSet closures)
+    {
+        if (closures.IsEmpty)
+            return null;
+        var closure = _closures[closures.First()];
+        var call = closure.Body?.DescendantsAndSelf().OfType<IInvocationOperation>().FirstOrDefault(i => i.TargetMethod.MethodKind == MethodKind.DelegateInvoke);
+        if (call?.Instance is IParameterReferenceOperation parameter && _state.Get(parameter.Parameter) is { Closures.IsEmpty: false } given)
+            return _closures[given.Closures.First()].Syntax;
+        return closure.Syntax;
     }
 
     private IdSet Origins(Value source)
@@ -515,7 +528,8 @@ internal sealed partial class Walker
         var key = Map(source, closures, syntax, named);
         var choice = ChoiceByKey(place, origins, key, ChoiceKind.Call, lower, null);
         var element = ElementOf(source, named);
-        element = element.With(varies: element.Varies.Except(origins));
+        rows = rows.Where(r => !IsRunning(r));
+        element = CloseValue(element, origins, rows, syntax, 4);
         // the row nearest to another: which one depends on all of them
         var order = key.With(tags: Tag.Move(key.Tags, Level.Element, Level.Aggregate, rows.Contains));
         if (!rows.IsEmpty)
@@ -755,6 +769,7 @@ internal sealed partial class Walker
         if (arguments.Length > 1)
         {
             o.Count ??= arguments[1].Number;
+            o.SizeVaries = o.SizeVaries.Union(arguments[1].Varies);
             o.CountText ??= arguments[1].CountText ?? (arguments[1].Number is null ? invocation.Arguments[1].Value.Syntax.ToString() : null);
         }
 

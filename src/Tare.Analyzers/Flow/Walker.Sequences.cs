@@ -41,7 +41,7 @@ internal sealed partial class Walker
         {
             var o = _facts.Objects[id];
             if (Tag.Has(o.Content.Tags, Level.Aggregate))
-                value = value.Join(CloseValue(o.Content, IdSet.Empty, RowsIn(o).Union(Tag.At(o.Content.Tags, Level.Element)), syntax, id));
+                value = value.Join(CloseValue(o.Content, IdSet.Empty, RowsThrough(instance, o), syntax, id));
         }
 
         if (!value.IsEmpty)

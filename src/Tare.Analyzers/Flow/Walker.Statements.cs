@@ -200,7 +200,7 @@ internal sealed partial class Walker
         {
             var layer = new State(_state);
             _state = layer;
-            using (Guarded(subject, choice.Value, negated: false))
+            using (Guarded(Deep(subject), choice.Value, negated: false))
             {
                 foreach (var statement in section.Body)
                     Statement(statement);

@@ -73,7 +73,8 @@ internal sealed partial class Walker
 
     private Value RootParameter(IParameterSymbol parameter)
     {
-        if (parameter.DeclaringSyntaxReferences.Length == 0)
+        // the command line's arguments are no rows
+        if (parameter.DeclaringSyntaxReferences.Length == 0 || parameter.ContainingSymbol is IMethodSymbol { Name: "Main", IsStatic: true } && parameter.Type is IArrayTypeSymbol)
             return Value.Empty;
         return Unseen(parameter, parameter.Type, parameter.DeclaringSyntaxReferences[0].GetSyntax(), Source.Parameter);
     }
@@ -148,6 +149,14 @@ internal sealed partial class Walker
         public HashSet<(HeapObject Object, string Member)> Written { get; } = new();
 
         public SyntaxNode Syntax { get; set; } = null!;
+
+        /// <summary>The first round through a loop does not know yet which rows the loop goes through.</summary>
+        public bool IsFirst { get; set; }
+
+        public bool Again { get; set; }
+
+        /// <summary>What the number of rounds differs with.</summary>
+        public IdSet Bound { get; set; }
 
         public Frame Frame { get; set; } = null!;
     }
