@@ -24,6 +24,12 @@ internal sealed class SplitRandom
         return (int)(draw % width);
     }
 
+    /// <summary>A number strictly between 0 and 1, in steps of 2^-53.</summary>
+    public double Fraction() => ((Next() >> 11) + 0.5) * (1.0 / 9007199254740992);
+
+    /// <summary>64 random bits.</summary>
+    public ulong Bits() => Next();
+
     /// <summary>Durstenfeld's shuffle (1964).</summary>
     public void Shuffle(int[] items)
     {
