@@ -14,10 +14,11 @@ namespace Tare.Analyzers;
 /// </summary>
 internal sealed class Session
 {
-    private const int Budget = 60_000;
+    private const int Budget = 30_000;
 
     private readonly Compilation _compilation;
     private readonly Bodies _bodies;
+    private readonly Gate _gate;
     private readonly Units _units;
     private readonly Catalogue _catalogue;
     private readonly Vocabulary _vocabulary;
@@ -32,16 +33,17 @@ internal sealed class Session
         _vocabulary = vocabulary;
         _options = options;
         _bodies = new Bodies(compilation, cancellation);
-        _units = new Units(compilation, vocabulary);
+        _gate = new Gate(vocabulary, catalogue);
+        _units = new Units(compilation, _gate);
     }
 
     public IReadOnlyList<Finding> FindingsIn(SemanticModel model, CancellationToken cancellation)
     {
-        if (!Gate.MayMatter(model.SyntaxTree, _vocabulary, cancellation))
+        var relevant = _units.LeadingTo(model.SyntaxTree, cancellation);
+        if (relevant.Count == 0)
             return Array.Empty<Finding>();
         _bodies.Use(model);
         var all = new List<Finding>();
-        var relevant = _units.LeadingTo(model.SyntaxTree, cancellation);
         var reached = new HashSet<ISymbol>(SymbolEqualityComparer.Default);
         var done = new List<UnitResult>();
         foreach (var type in relevant)

@@ -1,9 +1,7 @@
-using System.Collections.Concurrent;
 using System.Runtime.CompilerServices;
 using Microsoft.CodeAnalysis;
 using Microsoft.CodeAnalysis.CSharp;
 using Microsoft.CodeAnalysis.CSharp.Syntax;
-using Tare.Analyzers.Knowledge;
 
 namespace Tare.Analyzers;
 
@@ -17,27 +15,34 @@ internal sealed class Units
     private static readonly ConditionalWeakTable<SyntaxTree, Lexical> Facts = new();
 
     private readonly Compilation _compilation;
-    private readonly Vocabulary _vocabulary;
+    private readonly Gate _gate;
+    private readonly Lazy<IReadOnlyList<SyntaxTree>> _telling;
 
-    public Units(Compilation compilation, Vocabulary vocabulary)
+    public Units(Compilation compilation, Gate gate)
     {
         _compilation = compilation;
-        _vocabulary = vocabulary;
+        _gate = gate;
+        _telling = new Lazy<IReadOnlyList<SyntaxTree>>(() => _compilation.SyntaxTrees.Where(t => _gate.MayMatter(t, default)).ToArray());
     }
 
+    /// <summary>
+    /// The types to walk for a document's findings: none when no text of the compilation says anything that could matter,
+    /// or when no telling document leads here.
+    /// </summary>
     public IReadOnlyList<INamedTypeSymbol> LeadingTo(SyntaxTree tree, CancellationToken cancellation)
     {
+        var telling = _telling.Value;
+        if (telling.Count == 0)
+            return Array.Empty<INamedTypeSymbol>();
         var trees = new List<SyntaxTree> { tree };
         var known = new HashSet<SyntaxTree> { tree };
         for (int i = 0; i < trees.Count; i++)
         {
             cancellation.ThrowIfCancellationRequested();
-            var declared = Of(trees[i]).Declares;
-            foreach (var other in _compilation.SyntaxTrees)
+            var here = Of(trees[i]);
+            foreach (var other in telling)
             {
-                if (known.Contains(other) || !Gate.MayMatter(other, _vocabulary, cancellation))
-                    continue;
-                if (Of(other).Mentions.Overlaps(declared) || Of(other).Types.Overlaps(Of(trees[i]).Types))
+                if (!known.Contains(other) && (Of(other).Mentions.Overlaps(here.Declares) || Of(other).Types.Overlaps(here.Types)))
                 {
                     known.Add(other);
                     trees.Add(other);
@@ -45,6 +50,8 @@ internal sealed class Units
             }
         }
 
+        if (trees.Count == 1 && !_gate.MayMatter(tree, cancellation))
+            return Array.Empty<INamedTypeSymbol>();
         trees.Sort((a, b) => string.CompareOrdinal(a.FilePath, b.FilePath));
         var types = new List<INamedTypeSymbol>();
         foreach (var t in trees)
@@ -88,30 +95,30 @@ internal sealed class Units
 
     private sealed class Lexical
     {
+        private readonly SyntaxTree _tree;
+        private HashSet<string>? _mentions;
+
         public Lexical(SyntaxTree tree)
         {
-            var root = tree.GetRoot();
-            foreach (var node in root.DescendantNodes())
+            _tree = tree;
+            foreach (var node in tree.GetRoot().DescendantNodes(n => n is CompilationUnitSyntax or BaseNamespaceDeclarationSyntax or TypeDeclarationSyntax or BaseFieldDeclarationSyntax or VariableDeclarationSyntax or ParameterListSyntax))
             {
                 switch (node)
                 {
-                    case SimpleNameSyntax name:
-                        Mentions.Add(name.Identifier.ValueText);
-                        break;
                     case MethodDeclarationSyntax method:
                         Declares.Add(method.Identifier.ValueText);
                         break;
                     case PropertyDeclarationSyntax property:
                         Declares.Add(property.Identifier.ValueText);
                         break;
-                    case VariableDeclaratorSyntax { Parent.Parent: FieldDeclarationSyntax } field:
+                    case VariableDeclaratorSyntax field:
                         Declares.Add(field.Identifier.ValueText);
                         break;
                     case BaseTypeDeclarationSyntax type:
                         Declares.Add(type.Identifier.ValueText);
                         Types.Add(type.Identifier.ValueText);
                         break;
-                    case ParameterSyntax { Parent.Parent: TypeDeclarationSyntax } parameter:
+                    case ParameterSyntax parameter:
                         Declares.Add(parameter.Identifier.ValueText);
                         break;
                 }
@@ -120,8 +127,24 @@ internal sealed class Units
 
         public HashSet<string> Declares { get; } = new(StringComparer.Ordinal);
 
-        public HashSet<string> Mentions { get; } = new(StringComparer.Ordinal);
-
         public HashSet<string> Types { get; } = new(StringComparer.Ordinal);
+
+        /// <summary>Every name in the document; only telling documents are asked.</summary>
+        public HashSet<string> Mentions
+        {
+            get
+            {
+                if (_mentions is not null)
+                    return _mentions;
+                var mentions = new HashSet<string>(StringComparer.Ordinal);
+                foreach (var node in _tree.GetRoot().DescendantNodes())
+                {
+                    if (node is SimpleNameSyntax name)
+                        mentions.Add(name.Identifier.ValueText);
+                }
+
+                return _mentions = mentions;
+            }
+        }
     }
 }

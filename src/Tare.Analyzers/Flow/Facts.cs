@@ -5,11 +5,13 @@ namespace Tare.Analyzers.Flow;
 /// <summary>Everything that one walk found out.</summary>
 internal sealed class Facts
 {
+    private const int MostMeetings = 12;
+
     private readonly Dictionary<(SyntaxNode, int), int> _sites = new();
     private readonly Dictionary<(SyntaxNode, int, int), HeapObject> _objectsBySite = new();
     private readonly Dictionary<SyntaxNode, Origin> _originsBySyntax = new();
     private readonly Dictionary<(int, string), RowSet> _parts = new();
-    private readonly HashSet<(int, int)> _met = new();
+    private readonly Dictionary<(int, int, bool), List<Meeting>> _meetings = new();
     private readonly Dictionary<(SyntaxNode, int), Choice> _choicesByPlace = new();
     private readonly Dictionary<(SyntaxNode, int), LevelTest> _levelTests = new();
     private readonly Dictionary<(SyntaxNode, int), int> _comparisons = new();
@@ -102,17 +104,19 @@ internal sealed class Facts
 
     public bool Meet(int fitted, int scored, IdSet varies, IdSet wins, bool stored)
     {
-        _met.Add((fitted, scored));
-        if (Meetings.Count > 20000)
-            return false;
-        for (int i = Meetings.Count - 1; i >= 0 && i >= Meetings.Count - 60; i--)
+        if (!_meetings.TryGetValue((fitted, scored, stored), out var known))
+            _meetings[(fitted, scored, stored)] = known = new List<Meeting>();
+        foreach (var m in known)
         {
-            var m = Meetings[i];
-            if (m.Fitted == fitted && m.Scored == scored && m.Varies.ContainsAll(varies) && m.Wins.ContainsAll(wins) && m.Stored == stored)
+            if (m.Varies.ContainsAll(varies) && m.Wins.ContainsAll(wins))
                 return false;
         }
 
-        Meetings.Add(new Meeting(fitted, scored, varies, wins, Order++, stored));
+        if (known.Count >= MostMeetings)
+            return false;
+        var meeting = new Meeting(fitted, scored, varies, wins, Order++, stored);
+        known.Add(meeting);
+        Meetings.Add(meeting);
         return true;
     }
 

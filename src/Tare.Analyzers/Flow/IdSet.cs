@@ -63,6 +63,16 @@ internal readonly struct IdSet : IEquatable<IdSet>
         return new IdSet(merged);
     }
 
+    /// <summary>At most so many ids, the oldest ones: what came first is nearest to where it matters.</summary>
+    public IdSet AtMost(int count)
+    {
+        if (_ids is null || _ids.Length <= count)
+            return this;
+        var kept = new int[count];
+        Array.Copy(_ids, kept, count);
+        return new IdSet(kept);
+    }
+
     public IdSet Except(IdSet other)
     {
         if (_ids is null || other._ids is null || !Overlaps(other))

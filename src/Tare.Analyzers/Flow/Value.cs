@@ -35,6 +35,9 @@ internal enum Traits
 /// <summary>What is known of one value. Immutable; <see cref="Join"/> gives what holds on either path.</summary>
 internal sealed class Value
 {
+    private const int MostSites = 32;
+    private const int MostTags = 64;
+
     public static readonly Value Empty = new();
 
     /// <summary>Rows it depends on (<see cref="Tag"/>).</summary>
@@ -130,13 +133,13 @@ internal sealed class Value
             return other.Number is not null ? other.WithoutNumber() : other;
         return new Value
         {
-            Tags = Tags.Union(other.Tags),
+            Tags = Tags.Union(other.Tags).AtMost(MostTags),
             Varies = Varies.Union(other.Varies),
             Indexed = Indexed.Union(other.Indexed),
             Wins = Wins.Union(other.Wins),
-            Sites = Sites.Union(other.Sites),
+            Sites = Sites.Union(other.Sites).AtMost(MostSites),
             Objects = Objects.Union(other.Objects),
-            Models = Models.Union(other.Models),
+            Models = Models.Union(other.Models).AtMost(MostSites),
             Closures = Closures.Union(other.Closures),
             Over = Over.Union(other.Over),
             Compares = Compares.Union(other.Compares),
@@ -157,12 +160,12 @@ internal sealed class Value
             return Data();
         return new Value
         {
-            Tags = Tags.Union(other.Tags),
+            Tags = Tags.Union(other.Tags).AtMost(MostTags),
             Varies = Varies.Union(other.Varies),
             Indexed = Indexed.Union(other.Indexed),
             Wins = Wins.Union(other.Wins),
-            Sites = Sites.Union(other.Sites),
-            Models = Models.Union(other.Models),
+            Sites = Sites.Union(other.Sites).AtMost(MostSites),
+            Models = Models.Union(other.Models).AtMost(MostSites),
             Over = Over.Union(other.Over),
             Traits = Traits | other.Traits,
         };

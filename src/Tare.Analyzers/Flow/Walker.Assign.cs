@@ -96,10 +96,10 @@ internal sealed partial class Walker
 
     private void StoreStatic(ISymbol member, Value value)
     {
-        var old = _statics[member];
+        var old = _statics.TryGetValue(member, out var known) ? known : Value.Empty;
         var joined = old.Join(value);
         if (!joined.Same(old))
-            _changes++;
+            Changed();
         _statics[member] = joined;
     }
 
@@ -118,7 +118,7 @@ internal sealed partial class Walker
         {
             var o = _facts.Objects[id];
             if (o.Store(name, stored))
-                _changes++;
+                Changed();
             Written(o, name);
         }
 
@@ -181,7 +181,7 @@ internal sealed partial class Walker
         if (!joined.Same(o.Content))
         {
             o.Content = joined;
-            _changes++;
+            Changed();
         }
 
         Written(o, Contents);

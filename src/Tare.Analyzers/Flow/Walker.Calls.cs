@@ -329,6 +329,7 @@ internal sealed partial class Walker
         if (type is { TypeKind: TypeKind.Delegate } && creation.Arguments.Length == 1)
             return Expression(creation.Arguments[0].Value);
         var o = _facts.ObjectAt(creation.Syntax, _frame.Chain, type, _loops.Count);
+        _version++;
         o.Renew();
         o.IsCollection |= RowsTypes.IsCollection(type);
         var self = Ref(o);
@@ -429,7 +430,7 @@ internal sealed partial class Walker
             value = Named(value, parameter.Name, parameter, parameter.Type, syntax);
             string member = type.IsRecord ? parameter.Name : PrimaryName(parameter);
             if (o.Store(member, value))
-                _changes++;
+                Changed();
             Written(o, member);
             _state.Set(parameter, value);
         }
@@ -465,7 +466,7 @@ internal sealed partial class Walker
             var memberType = member is IFieldSymbol f ? f.Type : ((IPropertySymbol)member).Type;
             var value = Named(Expression(initial), member.Name, member, memberType, initial.Syntax);
             if (o.Store(member.Name, value))
-                _changes++;
+                Changed();
         }
     }
 
@@ -588,6 +589,7 @@ internal sealed partial class Walker
         }
 
         var model = _facts.ObjectAt(syntax, _frame.Chain, type, _loops.Count, 4);
+        _version++;
         model.Renew();
         if (whole.Count > 0 || !all.IsEmpty)
         {
@@ -648,10 +650,26 @@ internal sealed partial class Walker
     {
         if (value.Objects.IsEmpty && value.Fields is null && value.Closures.IsEmpty)
             return value;
+        // asked for again and again between changes: what one object holds is kept until something changes
+        bool single = value.Fields is null && value.Closures.IsEmpty && value.Objects.Count == 1 && depth == 6;
+        if (single && _deep.TryGetValue(value.Objects.First(), out var kept) && kept.Version == _version && kept.Of.Same(value))
+            return kept.Result;
         var seen = new HashSet<int>();
         var result = DeepInto(value, depth, seen);
+        _visits += seen.Count / 4;
+        if (single)
+            _deep[value.Objects.First()] = (_version, value, result);
         return result;
     }
+
+    private void Changed()
+    {
+        _changes++;
+        _version++;
+    }
+
+    private readonly Dictionary<int, (int Version, Value Of, Value Result)> _deep = new();
+    private int _version;
 
     private Value DeepInto(Value value, int depth, HashSet<int> seen)
     {

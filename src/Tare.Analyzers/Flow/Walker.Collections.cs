@@ -22,6 +22,7 @@ internal sealed partial class Walker
         if (array.Initializer is not null)
             return Literal(array.Initializer.ElementValues, array.Syntax, array.Type);
         var o = NewCollection(array.Syntax, array.Type);
+        _version++;
         o.Renew();
         foreach (var size in array.DimensionSizes)
         {
@@ -36,6 +37,7 @@ internal sealed partial class Walker
     private Value Literal(IReadOnlyList<IOperation> elements, SyntaxNode syntax, ITypeSymbol? type)
     {
         var o = NewCollection(syntax, type);
+        _version++;
         o.Renew();
         double count = 0;
         bool counted = true;
@@ -92,7 +94,7 @@ internal sealed partial class Walker
         if (!joined.Same(o.Element))
         {
             o.Element = joined;
-            _changes++;
+            Changed();
         }
     }
 
@@ -107,7 +109,7 @@ internal sealed partial class Walker
         if (!o.Per.ContainsAll(origins))
         {
             o.Per = o.Per.Union(origins);
-            _changes++;
+            Changed();
         }
 
         StoreInto(o, value);
@@ -117,7 +119,7 @@ internal sealed partial class Walker
             if (!joined.Same(o.Key))
             {
                 o.Key = joined;
-                _changes++;
+                Changed();
             }
         }
 
@@ -191,7 +193,7 @@ internal sealed partial class Walker
             if (!o.Per.ContainsAll(per))
             {
                 o.Per = o.Per.Union(per);
-                _changes++;
+                Changed();
             }
 
             if (per.IsEmpty && RunningOrigins(o.Depth).IsEmpty && !(o.Type is IArrayTypeSymbol))
@@ -205,7 +207,7 @@ internal sealed partial class Walker
                 if (!key.Same(o.Key))
                 {
                     o.Key = key;
-                    _changes++;
+                    Changed();
                 }
             }
 

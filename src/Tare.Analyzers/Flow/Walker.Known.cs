@@ -323,6 +323,7 @@ internal sealed partial class Walker
         }
 
         var o = _facts.ObjectAt(syntax, _frame.Chain, type, _loops.Count, 4);
+        _version++;
         o.Renew();
         if (RowsTypes.IsCollection(type))
         {

@@ -62,6 +62,7 @@ internal sealed partial class Walker
     /// <summary>The state of an object that a loop changes differs from round to round: a network while it trains.</summary>
     private bool CarryObjects(LoopScope scope)
     {
+        _version++;
         bool changed = false;
         foreach (var (o, member) in scope.Written)
         {
@@ -131,6 +132,7 @@ internal sealed partial class Walker
 
     private void CloseObject(HeapObject o, LoopScope scope)
     {
+        _version++;
         if (o.Depth > _loops.Count)
             return;
         bool perElement = o.Per.Overlaps(scope.Origins);

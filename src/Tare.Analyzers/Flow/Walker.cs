@@ -11,6 +11,8 @@ namespace Tare.Analyzers.Flow;
 internal sealed partial class Walker
 {
     private const int MaxCallDepth = 24;
+    private const int MostRows = 300;
+    private const int MostObjects = 3000;
     private const int MaxStackDepth = 220;
 
     private readonly Bodies _bodies;
@@ -129,7 +131,7 @@ internal sealed partial class Walker
 
     private bool Enter()
     {
-        if (++_visits > _budget)
+        if (++_visits > _budget || _facts.Rows.Count > MostRows || _facts.Objects.Count > MostObjects)
         {
             _facts.OverBudget = true;
             return false;

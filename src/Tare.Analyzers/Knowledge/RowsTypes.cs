@@ -47,6 +47,15 @@ internal static class RowsTypes
         return false;
     }
 
+    /// <summary>A type's name alone says that it can hold rows.</summary>
+    public static bool SaysRows(string typeName)
+    {
+        if (Names.Contains(typeName))
+            return true;
+        var words = Vocabulary.Words(typeName);
+        return words.Count > 0 && Array.IndexOf(DataWords, words[words.Count - 1]) >= 0;
+    }
+
     /// <summary>A user's own wrapper around rows, by its name.</summary>
     private static bool IsDataSet(INamedTypeSymbol type)
     {

@@ -31,6 +31,9 @@ internal sealed class Vocabulary
         _test = new HashSet<string>(TestWords.Concat(test.Select(w => w.ToLowerInvariant())), StringComparer.Ordinal);
     }
 
+    /// <summary>Words of rows that choose or judge: without one, or a split, nothing is chosen on test rows.</summary>
+    public IEnumerable<string> JudgingWords => _validation.Concat(_test).Concat(EvalWords).Concat(new[] { "sample" });
+
     public IEnumerable<string> RoleWords => _training.Concat(_validation).Concat(_test).Concat(EvalWords);
 
     /// <summary>The role that an identifier's words say, if they say one.</summary>
@@ -55,6 +58,11 @@ internal sealed class Vocabulary
 
             if (i > 0 && Array.IndexOf(NotRows, word) >= 0)
                 return Role.Unknown;
+            // "stdDev", "maxVal", a lone "val": no rows
+            if (word is "dev" && i > 0 && words[i - 1] is "std" or "standard" or "mean" or "abs" or "sd")
+                continue;
+            if (word is "val" or "va" or "te" or "tr" && (words.Count == 1 || i > 0 && words[i - 1] is "max" or "min" or "old" or "new" or "init" or "cur" or "key" or "ret" or "tmp" or "temp"))
+                continue;
             if (_validation.Contains(word))
                 role = Role.Validation;
             else if (_test.Contains(word))
