@@ -14,7 +14,7 @@ internal static class ChooseOnValidationRows
             || await document.GetSemanticModelAsync(cancel).ConfigureAwait(false) is not { } model
             || diagnostic.Location.SourceTree != root.SyntaxTree)
             return null;
-        foreach (var form in new Func<Scene, Edits, string?>[] { LoopChoice.Rewrite, SequenceChoice.Rewrite })
+        foreach (var form in new Func<Scene, Edits, string?>[] { LoopChoice.Rewrite, SequenceChoice.Rewrite, StraightChoice.Rewrite })
         {
             var edits = new Edits();
             if (form(new Scene(document, root, model, diagnostic), edits) is not { } title)

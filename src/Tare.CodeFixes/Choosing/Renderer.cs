@@ -74,7 +74,7 @@ internal sealed class Renderer
         }
 
         // A declared name may have another name here.
-        if (node is VariableDeclaratorSyntax or SingleVariableDesignationSyntax or ForEachStatementSyntax or ParameterSyntax
+        if (node is VariableDeclaratorSyntax or SingleVariableDesignationSyntax or ForEachStatementSyntax or ParameterSyntax or LocalFunctionStatementSyntax
             && _scene.Model.GetDeclaredSymbol(node) is { } declared && Symbols.TryGetValue(declared, out string? name))
         {
             var identifier = node switch
@@ -82,6 +82,7 @@ internal sealed class Renderer
                 VariableDeclaratorSyntax v => v.Identifier,
                 SingleVariableDesignationSyntax s => s.Identifier,
                 ForEachStatementSyntax f => f.Identifier,
+                LocalFunctionStatementSyntax l => l.Identifier,
                 _ => ((ParameterSyntax)node).Identifier,
             };
             foreach (var part in node.ChildNodesAndTokens())

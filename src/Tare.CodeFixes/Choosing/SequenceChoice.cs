@@ -53,7 +53,7 @@ internal sealed class SequenceChoice
             return null;
         if (_winner.RefitOfTheirOwn(last) is { } refit)
             _refit = refit;
-        var slice = new Slice(_scene, e => _renderer.Expressions.ContainsKey(Code.Key(e)));
+        var slice = new Slice(_scene, e => _renderer.Expressions.ContainsKey(Code.Key(e)), plan.HoldsOut);
         var dependent = _parts.Where(p => p.Depends).ToList();
         if (dependent.Count == 0)
             return null;
@@ -196,7 +196,7 @@ internal sealed class SequenceChoice
         foreach (var part in dependent)
         {
             if (!part.IsWhole)
-                part.Name = part.OnTest ? _scene.Names.Free(Winner.TestName(part.Member ?? Singular(_pick.Scores), part.Value)) : _scene.Names.Free("winner" + (part.Member is "Model" or null ? "" : part.Member), "winner" + part.Member);
+                part.Name = part.OnTest ? _scene.Names.Free(Winner.TestName(NameOf(part), part.Value)) : _scene.Names.Free("winner" + (part.Member is "Model" or null ? "" : part.Member), "winner" + part.Member);
         }
 
         foreach (var node in slice.Nodes)
@@ -308,6 +308,12 @@ internal sealed class SequenceChoice
 
         return candidate;
     }
+
+    /// <summary>What the part is called: by the variable that takes it, else by its member, else by the scores it is one of.</summary>
+    private string NameOf(SequencePart part) =>
+        _pick.Parts is not null && part.Access is { } variable ? variable
+        : part.Member is { } member && !(member.StartsWith("Item", StringComparison.Ordinal) && char.IsDigit(member[member.Length - 1])) ? member
+        : Singular(_pick.Scores);
 
     private static string Singular(ExpressionSyntax? scores)
     {

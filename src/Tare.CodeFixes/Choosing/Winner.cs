@@ -84,7 +84,7 @@ internal sealed class Winner
             }
         }
 
-        var turn = new Slice(_scene, IsKnown);
+        var turn = new Slice(_scene, IsKnown, refit);
         turn.Need(score);
         foreach (var one in dependent)
             turn.Need(one.Value);
