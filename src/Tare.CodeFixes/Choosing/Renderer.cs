@@ -27,7 +27,15 @@ internal sealed class Renderer
     {
         var text = new StringBuilder();
         Write(node, text);
-        return text.ToString().Trim();
+
+        // Comments around it speak of the first time the code runs.
+        string written = text.ToString();
+        string leading = node.GetLeadingTrivia().ToFullString(), trailing = node.GetTrailingTrivia().ToFullString();
+        if (written.StartsWith(leading, StringComparison.Ordinal))
+            written = written.Substring(leading.Length);
+        if (written.EndsWith(trailing, StringComparison.Ordinal))
+            written = written.Substring(0, written.Length - trailing.Length);
+        return written.Trim();
     }
 
     /// <summary>The text at another depth: lines after the first move with the first.</summary>
@@ -50,7 +58,7 @@ internal sealed class Renderer
 
     private void Write(SyntaxNode node, StringBuilder text)
     {
-        if (node is StatementSyntax statement && Drops(statement))
+        if (node is StatementSyntax { Parent: BlockSyntax } statement && Drops(statement))
             return;
         if (node is ExpressionSyntax expression)
         {

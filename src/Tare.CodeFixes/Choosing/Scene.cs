@@ -20,13 +20,14 @@ internal sealed class Scene
     private readonly HashSet<string> _training;
     private readonly HashSet<string> _validation;
 
-    public Scene(Document document, SyntaxNode root, SemanticModel model, Diagnostic diagnostic)
+    /// <param name="choice">Where the choice stands in this text, which may differ from the one that was analysed.</param>
+    public Scene(Document document, SyntaxNode root, SemanticModel model, Diagnostic diagnostic, TextSpan choice)
     {
         Document = document;
         Root = root;
         Model = model;
         Diagnostic = diagnostic;
-        Choice = root.FindNode(diagnostic.Location.SourceSpan, getInnermostNodeForTie: true);
+        Choice = root.FindNode(choice, getInnermostNodeForTie: true);
         Frame = Choice.AncestorsAndSelf().First(n => n is LocalFunctionStatementSyntax or BaseMethodDeclarationSyntax or AccessorDeclarationSyntax or PropertyDeclarationSyntax or FieldDeclarationSyntax or CompilationUnitSyntax);
         _test = Listed("tare.rows");
         _training = Listed("tare.training");

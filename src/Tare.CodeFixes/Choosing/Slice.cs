@@ -42,9 +42,19 @@ internal sealed class Slice
             if (!defined.Any(_needed.Contains) && !(_refit && node is ExpressionStatementSyntax && defined.Any(_known.Contains) && _scene.Mentions(node, RowsRole.Training)))
                 continue;
             Nodes.Insert(0, node);
-            _needed.UnionWith(Reads(node));
+
+            // What one statement of a loop needs may make another needed.
+            for (int before = -1; before != _needed.Count;)
+            {
+                before = _needed.Count;
+                _needed.UnionWith(Reads(node));
+            }
         }
     }
+
+    /// <summary>Whether a statement within a larger one of the slice only changes what nothing here needs.</summary>
+    public bool IsIdle(SyntaxNode statement) => statement is ExpressionStatementSyntax { Expression: AssignmentExpressionSyntax or PostfixUnaryExpressionSyntax or PrefixUnaryExpressionSyntax }
+        && statement.FirstAncestorOrSelf<LambdaExpressionSyntax>() is null && Defines(statement) is { Count: > 0 } defined && !defined.Any(_needed.Contains);
 
     public bool IsNeeded(ISymbol symbol) => _needed.Contains(symbol);
 
@@ -115,6 +125,8 @@ internal sealed class Slice
 
         void Walk(SyntaxNode inner)
         {
+            if (inner != node && IsIdle(inner))
+                return;
             if (inner is ExpressionSyntax expression)
             {
                 if (_scene.RowsAt(expression) is not null)

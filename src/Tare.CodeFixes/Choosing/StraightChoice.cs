@@ -168,7 +168,7 @@ internal sealed class StraightChoice
         var renderer = new Renderer(_scene)
         {
             // In a loop that scores both candidates only the winner's part is left.
-            Drops = s => s is ExpressionStatementSyntax { Expression: AssignmentExpressionSyntax or PostfixUnaryExpressionSyntax } && s.FirstAncestorOrSelf<LambdaExpressionSyntax>() is null && !slice.Defines(s).Any(slice.IsNeeded),
+            Drops = slice.IsIdle,
         };
         lines.Add("{");
         foreach (var node in turn)
@@ -200,7 +200,7 @@ internal sealed class StraightChoice
     }
 
     private static bool IsTop(ISymbol symbol, SyntaxNode node) =>
-        symbol.DeclaringSyntaxReferences[0].GetSyntax() is var syntax && (syntax == node || syntax.FirstAncestorOrSelf<StatementSyntax>() == node);
+        node is not (ForStatementSyntax or CommonForEachStatementSyntax) && symbol.DeclaringSyntaxReferences[0].GetSyntax() is var syntax && (syntax == node || syntax.FirstAncestorOrSelf<StatementSyntax>() == node);
 
     /// <summary>Something fitted here that is used after the choice, other than as the winner, would stay fitted on fewer rows.</summary>
     private bool UsedLater(Slice both)
