@@ -92,6 +92,12 @@ internal sealed class Scene
             return null;
         if (expression.Parent is NameColonSyntax or NameEqualsSyntax or QualifiedNameSyntax)
             return null;
+
+        // Asking whether rows are the same rows, or are there at all, is no use of them.
+        if (expression.Parent is BinaryExpressionSyntax { RawKind: (int)SyntaxKind.EqualsExpression or (int)SyntaxKind.NotEqualsExpression })
+            return null;
+        if (expression.Parent is ArgumentSyntax { Parent.Parent: InvocationExpressionSyntax called } && called.Expression.ToString().EndsWith("ReferenceEquals", StringComparison.Ordinal))
+            return null;
         var symbol = Model.GetSymbolInfo(expression).Symbol;
         ITypeSymbol? type = symbol switch
         {
