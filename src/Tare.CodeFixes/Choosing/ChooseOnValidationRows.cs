@@ -35,7 +35,7 @@ internal static class ChooseOnValidationRows
     private static async Task<(string Title, Document Document)?> TryFormsAsync(
         Document original, Document document, SyntaxNode root, SemanticModel model, Diagnostic diagnostic, TextSpan choice, CancellationToken cancel)
     {
-        foreach (var form in new Func<Scene, Edits, string?>[] { LoopChoice.Rewrite, SequenceChoice.Rewrite, StraightChoice.Rewrite })
+        foreach (var form in new Func<Scene, Edits, string?>[] { LoopChoice.Rewrite, SequenceChoice.Rewrite, StraightChoice.Rewrite, HelperChoice.Rewrite })
         {
             var edits = new Edits();
             if (form(new Scene(document, root, model, diagnostic, choice), edits) is not { } title)
