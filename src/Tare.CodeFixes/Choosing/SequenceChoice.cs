@@ -89,6 +89,20 @@ internal sealed class SequenceChoice
         if (_pick.IsIndex)
         {
             string at = _pick.Winner!;
+            if (_pick.LookedUpIn is { } list)
+            {
+                if (Turn.Candidate is { } one && Turn.Source?.ToString() == list)
+                    _renderer.Symbols[one] = at;
+                else if (Turn.Region is ForEachStatementSyntax over && over.Expression.ToString() == list && _scene.Model.GetDeclaredSymbol(over) is { } each1)
+                    _renderer.Symbols[each1] = at;
+                else if (Turn.Region is ForStatementSyntax { Declaration.Variables: [{ } place] })
+                    _renderer.Expressions[Code.Key($"{list}[{place.Identifier.Text}]")] = at;
+                else
+                    return false;
+                _parts.Add(new SequencePart(null, Turn.Element, null, true, true));
+                return true;
+            }
+
             if (Turn.Key is { } key)
                 _renderer.Expressions[Code.Key(key)] = at;
             else if ((Turn.Candidate, Turn.Source) is ({ } candidate, { } source) && source is IdentifierNameSyntax or MemberAccessExpressionSyntax)
@@ -243,6 +257,8 @@ internal sealed class SequenceChoice
             string type = isVar ? "var" : _scene.Model.GetTypeInfo(part.Value).Type?.ToMinimalDisplayString(_scene.Model, _pick.Statement.SpanStart) ?? "var";
             if (part.IsWhole)
                 lines.Add($"{part.Access} = {text};");
+            else if (part.OnTest && _pick.IsCandidate && ScoresAgain(text))
+                continue;
             else if (!part.OnTest && _renderer.Computed.Values.Contains(text))
                 part.Name = text;
             else
@@ -251,6 +267,9 @@ internal sealed class SequenceChoice
                 _renderer.Expressions[Code.Key(part.Value)] = part.Name!;
         }
     }
+
+    /// <summary>Whether later code scores the winner already.</summary>
+    private bool ScoresAgain(string score) => _scene.Frame.DescendantNodes().OfType<ExpressionSyntax>().Any(e => e.SpanStart > _pick.Statement.Span.End && Code.Key(e) == Code.Key(score));
 
     /// <summary>What is read of the winner later is what the test rows say.</summary>
     private void Rename(List<SequencePart> dependent, List<string> lines)

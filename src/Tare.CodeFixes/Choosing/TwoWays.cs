@@ -48,6 +48,8 @@ internal sealed class TwoWays
     {
         if (scene.Choice.FirstAncestorOrSelf<ConditionalExpressionSyntax>(c => c.Condition.Span.Contains(scene.Choice.Span) || c == scene.Choice) is not { } conditional || Comparison(conditional.Condition) is not { } two || Code.StatementOf(conditional) is not { } statement)
             return null;
+        if (InLoop(scene, conditional))
+            return null;
         var values = new List<TwoWaysValue>();
         ExpressionSyntax whole = conditional;
         while (whole.Parent is ParenthesizedExpressionSyntax outer)
@@ -76,7 +78,7 @@ internal sealed class TwoWays
     {
         if (scene.Choice.FirstAncestorOrSelf<IfStatementSyntax>(i => i.Condition.Span.Contains(scene.Choice.Span)) is not { } test || Comparison(test.Condition) is not { } two)
             return null;
-        if (test.Ancestors().TakeWhile(a => a != scene.Frame).Any(a => a is ForStatementSyntax or CommonForEachStatementSyntax or WhileStatementSyntax or DoStatementSyntax))
+        if (InLoop(scene, test))
             return null;
         var then = Kept.In(Inside(test.Statement));
         var values = new List<TwoWaysValue>();
@@ -108,6 +110,10 @@ internal sealed class TwoWays
 
         return values.Count == 0 ? null : new TwoWays(test, test.Condition, $"{left} {two.OperatorToken.Text} {right}", left, right, values);
     }
+
+    // Straight-line code has no turn before this one that the best so far could come from.
+    private static bool InLoop(Scene scene, SyntaxNode node) => node.Ancestors().TakeWhile(a => a != scene.Frame)
+        .Any(a => a is ForStatementSyntax or CommonForEachStatementSyntax or WhileStatementSyntax or DoStatementSyntax or AnonymousFunctionExpressionSyntax);
 
     private static IEnumerable<StatementSyntax> Inside(StatementSyntax statement) => statement is BlockSyntax block ? block.Statements : new[] { statement };
 
