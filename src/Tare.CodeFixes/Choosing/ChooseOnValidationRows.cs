@@ -14,14 +14,35 @@ internal static class ChooseOnValidationRows
             || await document.GetSemanticModelAsync(cancel).ConfigureAwait(false) is not { } model
             || diagnostic.Location.SourceTree != root.SyntaxTree)
             return null;
-        foreach (var form in new Func<Scene, Edits, string?>[] { LoopChoice.Rewrite, SequenceChoice.Rewrite })
+        var found = await TryFormsAsync(document, document, root, model, diagnostic, diagnostic.Location.SourceSpan, cancel).ConfigureAwait(false);
+        if (found is not null)
+            return found;
+
+        // Helpers that take rows from around them get them as parameters first: only then can the rows be exchanged.
+        var edits = new Edits();
+        if (!CapturedRows.Lift(new Scene(document, root, model, diagnostic, diagnostic.Location.SourceSpan), edits))
+            return null;
+        var text = await document.GetTextAsync(cancel).ConfigureAwait(false);
+        var changes = edits.Changes();
+        var lifted = document.WithText(text.WithChanges(changes));
+        int moved = changes.Where(c => c.Span.End <= diagnostic.Location.SourceSpan.Start).Sum(c => c.NewText!.Length - c.Span.Length);
+        int grown = changes.Where(c => c.Span.Start >= diagnostic.Location.SourceSpan.Start && c.Span.End <= diagnostic.Location.SourceSpan.End).Sum(c => c.NewText!.Length - c.Span.Length);
+        return await lifted.GetSyntaxRootAsync(cancel).ConfigureAwait(false) is { } liftedRoot && await lifted.GetSemanticModelAsync(cancel).ConfigureAwait(false) is { } liftedModel
+            ? await TryFormsAsync(document, lifted, liftedRoot, liftedModel, diagnostic, new TextSpan(diagnostic.Location.SourceSpan.Start + moved, diagnostic.Location.SourceSpan.Length + grown), cancel).ConfigureAwait(false)
+            : null;
+    }
+
+    private static async Task<(string Title, Document Document)?> TryFormsAsync(
+        Document original, Document document, SyntaxNode root, SemanticModel model, Diagnostic diagnostic, TextSpan choice, CancellationToken cancel)
+    {
+        foreach (var form in new Func<Scene, Edits, string?>[] { LoopChoice.Rewrite, SequenceChoice.Rewrite, StraightChoice.Rewrite, HelperChoice.Rewrite })
         {
             var edits = new Edits();
-            if (form(new Scene(document, root, model, diagnostic), edits) is not { } title)
+            if (form(new Scene(document, root, model, diagnostic, choice), edits) is not { } title)
                 continue;
             var text = await document.GetTextAsync(cancel).ConfigureAwait(false);
             var changed = document.WithText(WithUsings(text.WithChanges(edits.Changes()), root, edits));
-            if (await CompilesAsync(document, changed, cancel).ConfigureAwait(false))
+            if (await CompilesAsync(original, changed, cancel).ConfigureAwait(false))
                 return (title, changed);
         }
 

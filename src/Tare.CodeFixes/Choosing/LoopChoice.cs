@@ -117,6 +117,6 @@ internal sealed class LoopChoice
         winner.InsertBefore(first, plan.Lines);
         if (plan.Using is { } needed)
             edits.Usings.Add(needed);
-        return plan.Title;
+        return winner.KeepsModel ? plan.Title + " (the kept model stays trained on the rest)" : plan.Title;
     }
 }

@@ -42,6 +42,9 @@ internal sealed class Pick
     /// <summary>The sequence of scores, where the winner is a place in it.</summary>
     public ExpressionSyntax? Scores { get; private set; }
 
+    /// <summary>What the place was looked up in, where the variable holds the candidate found there.</summary>
+    public string? LookedUpIn { get; private set; }
+
     public static Pick? Of(Scene scene)
     {
         if (scene.Choice.FirstAncestorOrSelf<OrderByClauseSyntax>() is { } order && order.FirstAncestorOrSelf<QueryExpressionSyntax>() is { } query)
@@ -62,7 +65,21 @@ internal sealed class Pick
     private static Pick? Index(Scene scene, InvocationExpressionSyntax call, MemberAccessExpressionSyntax called)
     {
         var scores = scene.Model.GetSymbolInfo(call).Symbol is IMethodSymbol { IsStatic: true, ContainingType.Name: "Array" } && call.ArgumentList.Arguments.Count > 0 ? call.ArgumentList.Arguments[0].Expression : called.Expression;
-        if (ElementTurn.Of(scene, scores) is not { } turn || Held(scene, call, turn, false) is not { Winner: not null } pick)
+        if (ElementTurn.Of(scene, scores) is not { } turn)
+            return null;
+
+        // ks[scores.IndexOf(scores.Max())]: the variable holds the candidate itself.
+        if (call.Parent is ArgumentSyntax { Parent.Parent: ElementAccessExpressionSyntax looked })
+        {
+            if (Held(scene, looked, turn, false) is not { Winner: not null, Member: null } taken)
+                return null;
+            taken.IsIndex = true;
+            taken.Scores = scores;
+            taken.LookedUpIn = looked.Expression.ToString();
+            return taken;
+        }
+
+        if (Held(scene, call, turn, false) is not { Winner: not null } pick)
             return null;
         pick.IsIndex = true;
         pick.Scores = scores;

@@ -27,7 +27,15 @@ internal sealed class Renderer
     {
         var text = new StringBuilder();
         Write(node, text);
-        return text.ToString().Trim();
+
+        // Comments around it speak of the first time the code runs.
+        string written = text.ToString();
+        string leading = node.GetLeadingTrivia().ToFullString(), trailing = node.GetTrailingTrivia().ToFullString();
+        if (written.StartsWith(leading, StringComparison.Ordinal))
+            written = written.Substring(leading.Length);
+        if (written.EndsWith(trailing, StringComparison.Ordinal))
+            written = written.Substring(0, written.Length - trailing.Length);
+        return written.Trim();
     }
 
     /// <summary>The text at another depth: lines after the first move with the first.</summary>
@@ -50,7 +58,7 @@ internal sealed class Renderer
 
     private void Write(SyntaxNode node, StringBuilder text)
     {
-        if (node is StatementSyntax statement && Drops(statement))
+        if (node is StatementSyntax { Parent: BlockSyntax } statement && Drops(statement))
             return;
         if (node is ExpressionSyntax expression)
         {
@@ -74,7 +82,7 @@ internal sealed class Renderer
         }
 
         // A declared name may have another name here.
-        if (node is VariableDeclaratorSyntax or SingleVariableDesignationSyntax or ForEachStatementSyntax or ParameterSyntax
+        if (node is VariableDeclaratorSyntax or SingleVariableDesignationSyntax or ForEachStatementSyntax or ParameterSyntax or LocalFunctionStatementSyntax
             && _scene.Model.GetDeclaredSymbol(node) is { } declared && Symbols.TryGetValue(declared, out string? name))
         {
             var identifier = node switch
@@ -82,6 +90,7 @@ internal sealed class Renderer
                 VariableDeclaratorSyntax v => v.Identifier,
                 SingleVariableDesignationSyntax s => s.Identifier,
                 ForEachStatementSyntax f => f.Identifier,
+                LocalFunctionStatementSyntax l => l.Identifier,
                 _ => ((ParameterSyntax)node).Identifier,
             };
             foreach (var part in node.ChildNodesAndTokens())

@@ -20,13 +20,14 @@ internal sealed class Scene
     private readonly HashSet<string> _training;
     private readonly HashSet<string> _validation;
 
-    public Scene(Document document, SyntaxNode root, SemanticModel model, Diagnostic diagnostic)
+    /// <param name="choice">Where the choice stands in this text, which may differ from the one that was analysed.</param>
+    public Scene(Document document, SyntaxNode root, SemanticModel model, Diagnostic diagnostic, TextSpan choice)
     {
         Document = document;
         Root = root;
         Model = model;
         Diagnostic = diagnostic;
-        Choice = root.FindNode(diagnostic.Location.SourceSpan, getInnermostNodeForTie: true);
+        Choice = root.FindNode(choice, getInnermostNodeForTie: true);
         Frame = Choice.AncestorsAndSelf().First(n => n is LocalFunctionStatementSyntax or BaseMethodDeclarationSyntax or AccessorDeclarationSyntax or PropertyDeclarationSyntax or FieldDeclarationSyntax or CompilationUnitSyntax);
         _test = Listed("tare.rows");
         _training = Listed("tare.training");
@@ -90,6 +91,12 @@ internal sealed class Scene
         if (!IsChain(expression) || expression.Parent is MemberAccessExpressionSyntax parent && parent.Name == expression)
             return null;
         if (expression.Parent is NameColonSyntax or NameEqualsSyntax or QualifiedNameSyntax)
+            return null;
+
+        // Asking whether rows are the same rows, or are there at all, is no use of them.
+        if (expression.Parent is BinaryExpressionSyntax { RawKind: (int)SyntaxKind.EqualsExpression or (int)SyntaxKind.NotEqualsExpression })
+            return null;
+        if (expression.Parent is ArgumentSyntax { Parent.Parent: InvocationExpressionSyntax called } && called.Expression.ToString().EndsWith("ReferenceEquals", StringComparison.Ordinal))
             return null;
         var symbol = Model.GetSymbolInfo(expression).Symbol;
         ITypeSymbol? type = symbol switch

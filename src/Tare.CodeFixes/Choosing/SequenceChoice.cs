@@ -53,7 +53,7 @@ internal sealed class SequenceChoice
             return null;
         if (_winner.RefitOfTheirOwn(last) is { } refit)
             _refit = refit;
-        var slice = new Slice(_scene, e => _renderer.Expressions.ContainsKey(Code.Key(e)));
+        var slice = new Slice(_scene, e => _renderer.Expressions.ContainsKey(Code.Key(e)), plan.HoldsOut);
         var dependent = _parts.Where(p => p.Depends).ToList();
         if (dependent.Count == 0)
             return null;
@@ -89,6 +89,20 @@ internal sealed class SequenceChoice
         if (_pick.IsIndex)
         {
             string at = _pick.Winner!;
+            if (_pick.LookedUpIn is { } list)
+            {
+                if (Turn.Candidate is { } one && Turn.Source?.ToString() == list)
+                    _renderer.Symbols[one] = at;
+                else if (Turn.Region is ForEachStatementSyntax over && over.Expression.ToString() == list && _scene.Model.GetDeclaredSymbol(over) is { } each1)
+                    _renderer.Symbols[each1] = at;
+                else if (Turn.Region is ForStatementSyntax { Declaration.Variables: [{ } place] })
+                    _renderer.Expressions[Code.Key($"{list}[{place.Identifier.Text}]")] = at;
+                else
+                    return false;
+                _parts.Add(new SequencePart(null, Turn.Element, null, true, true));
+                return true;
+            }
+
             if (Turn.Key is { } key)
                 _renderer.Expressions[Code.Key(key)] = at;
             else if ((Turn.Candidate, Turn.Source) is ({ } candidate, { } source) && source is IdentifierNameSyntax or MemberAccessExpressionSyntax)
@@ -196,7 +210,7 @@ internal sealed class SequenceChoice
         foreach (var part in dependent)
         {
             if (!part.IsWhole)
-                part.Name = part.OnTest ? _scene.Names.Free(Winner.TestName(part.Member ?? Singular(_pick.Scores), part.Value)) : _scene.Names.Free("winner" + (part.Member is "Model" or null ? "" : part.Member), "winner" + part.Member);
+                part.Name = part.OnTest ? _scene.Names.Free(Winner.TestName(NameOf(part), part.Value)) : _scene.Names.Free("winner" + (part.Member is "Model" or null ? "" : part.Member), "winner" + part.Member);
         }
 
         foreach (var node in slice.Nodes)
@@ -243,6 +257,8 @@ internal sealed class SequenceChoice
             string type = isVar ? "var" : _scene.Model.GetTypeInfo(part.Value).Type?.ToMinimalDisplayString(_scene.Model, _pick.Statement.SpanStart) ?? "var";
             if (part.IsWhole)
                 lines.Add($"{part.Access} = {text};");
+            else if (part.OnTest && _pick.IsCandidate && ScoresAgain(text))
+                continue;
             else if (!part.OnTest && _renderer.Computed.Values.Contains(text))
                 part.Name = text;
             else
@@ -251,6 +267,9 @@ internal sealed class SequenceChoice
                 _renderer.Expressions[Code.Key(part.Value)] = part.Name!;
         }
     }
+
+    /// <summary>Whether later code scores the winner already.</summary>
+    private bool ScoresAgain(string score) => _scene.Frame.DescendantNodes().OfType<ExpressionSyntax>().Any(e => e.SpanStart > _pick.Statement.Span.End && Code.Key(e) == Code.Key(score));
 
     /// <summary>What is read of the winner later is what the test rows say.</summary>
     private void Rename(List<SequencePart> dependent, List<string> lines)
@@ -308,6 +327,12 @@ internal sealed class SequenceChoice
 
         return candidate;
     }
+
+    /// <summary>What the part is called: by the variable that takes it, else by its member, else by the scores it is one of.</summary>
+    private string NameOf(SequencePart part) =>
+        _pick.Parts is not null && part.Access is { } variable ? variable
+        : part.Member is { } member && !(member.StartsWith("Item", StringComparison.Ordinal) && char.IsDigit(member[member.Length - 1])) ? member
+        : Singular(_pick.Scores);
 
     private static string Singular(ExpressionSyntax? scores)
     {

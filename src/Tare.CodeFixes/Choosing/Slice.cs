@@ -1,6 +1,7 @@
 using Microsoft.CodeAnalysis;
 using Microsoft.CodeAnalysis.CSharp;
 using Microsoft.CodeAnalysis.CSharp.Syntax;
+using Tare.CodeFixes.Rows;
 
 namespace Tare.CodeFixes.Choosing;
 
@@ -12,13 +13,17 @@ internal sealed class Slice
 {
     private readonly Scene _scene;
     private readonly Func<ExpressionSyntax, bool> _isKnown;
+    private readonly bool _refit;
     private readonly HashSet<ISymbol> _needed = new(SymbolEqualityComparer.Default);
+    private readonly HashSet<ISymbol> _known = new(SymbolEqualityComparer.Default);
 
     /// <param name="isKnown">Says of an expression that its value for the winner is at hand, so that what it is made of does not matter.</param>
-    public Slice(Scene scene, Func<ExpressionSyntax, bool> isKnown)
+    /// <param name="refit">Calls that train such a value in place belong to the turn all the same.</param>
+    public Slice(Scene scene, Func<ExpressionSyntax, bool> isKnown, bool refit = false)
     {
         _scene = scene;
         _isKnown = isKnown;
+        _refit = refit;
     }
 
     /// <summary>In the order in which they run. Query clauses and statements.</summary>
@@ -34,12 +39,22 @@ internal sealed class Slice
         foreach (var node in Before(from, region))
         {
             var defined = Defines(node);
-            if (!defined.Any(_needed.Contains))
+            if (!defined.Any(_needed.Contains) && !(_refit && node is ExpressionStatementSyntax && defined.Any(_known.Contains) && _scene.Mentions(node, RowsRole.Training)))
                 continue;
             Nodes.Insert(0, node);
-            _needed.UnionWith(Reads(node));
+
+            // What one statement of a loop needs may make another needed.
+            for (int before = -1; before != _needed.Count;)
+            {
+                before = _needed.Count;
+                _needed.UnionWith(Reads(node));
+            }
         }
     }
+
+    /// <summary>Whether a statement within a larger one of the slice only changes what nothing here needs.</summary>
+    public bool IsIdle(SyntaxNode statement) => statement is ExpressionStatementSyntax { Expression: AssignmentExpressionSyntax or PostfixUnaryExpressionSyntax or PrefixUnaryExpressionSyntax }
+        && statement.FirstAncestorOrSelf<LambdaExpressionSyntax>() is null && Defines(statement) is { Count: > 0 } defined && !defined.Any(_needed.Contains);
 
     public bool IsNeeded(ISymbol symbol) => _needed.Contains(symbol);
 
@@ -110,10 +125,18 @@ internal sealed class Slice
 
         void Walk(SyntaxNode inner)
         {
+            if (inner != node && IsIdle(inner))
+                return;
             if (inner is ExpressionSyntax expression)
             {
-                if (_isKnown(expression) || _scene.RowsAt(expression) is not null)
+                if (_scene.RowsAt(expression) is not null)
                     return;
+                if (_isKnown(expression))
+                {
+                    if (_scene.Model.GetSymbolInfo(expression).Symbol is ILocalSymbol or IParameterSymbol)
+                        _known.Add(_scene.Model.GetSymbolInfo(expression).Symbol!);
+                    return;
+                }
                 if (inner is IdentifierNameSyntax name && _scene.Model.GetSymbolInfo(name).Symbol is ILocalSymbol or IParameterSymbol or IRangeVariableSymbol or IMethodSymbol { MethodKind: MethodKind.LocalFunction } or IFieldSymbol)
                     read.Add(_scene.Model.GetSymbolInfo(name).Symbol!);
             }

@@ -84,11 +84,22 @@ internal sealed class Winner
             }
         }
 
-        var turn = new Slice(_scene, IsKnown);
+        var turn = new Slice(_scene, IsKnown, refit);
         turn.Need(score);
         foreach (var one in dependent)
             turn.Need(one.Value);
         turn.Back(test, family);
+        if (Carried(turn, family, kept, score) is { } carried)
+        {
+            // One model trained in steps: what was kept of the chosen step is the winner, and it cannot be trained again by itself.
+            var copy = kept.FirstOrDefault(k => Code.Key(k.Target) != Code.Key(best) && k.Value.DescendantNodesAndSelf().OfType<IdentifierNameSyntax>().Any(i => SymbolEqualityComparer.Default.Equals(model.GetSymbolInfo(i).Symbol, carried)));
+            if (!refit || copy is null || outside.Count > 0 || KeepsModel)
+                return false;
+            KeepsModel = true;
+            _renderer.Expressions[carried.Name] = Sure(copy.Target);
+            return Follow(family, test, best, score, kept, false, outside);
+        }
+
         if (!KeepCandidates(turn, family, test, kept))
             return false;
         var lines = new List<string>();
@@ -181,6 +192,33 @@ internal sealed class Winner
         string bare = RowsName.Upper(Bare(symbol.Name));
         bool onTest = (value is not null && _scene.Mentions(value, RowsRole.Test)) || symbol is ILocalSymbol { Type.SpecialType: not SpecialType.None };
         return onTest ? _scene.Names.Free("test" + bare) : _scene.Names.Free("winner", "winner" + bare);
+    }
+
+    /// <summary>Whether the kept model stays as it was trained on part of the rows, because its training cannot be repeated.</summary>
+    public bool KeepsModel { get; private set; }
+
+    /// <summary>A variable from outside the loop that each turn trains further; null when every turn starts afresh.</summary>
+    private ISymbol? Carried(Slice turn, StatementSyntax family, List<Kept> kept, ExpressionSyntax score)
+    {
+        bool usesCandidate = turn.Nodes.Append(score).SelectMany(n => n.DescendantNodesAndSelf()).OfType<ExpressionSyntax>()
+            .Any(e => _renderer.Expressions.ContainsKey(Code.Key(e)) || (e is IdentifierNameSyntax name && new Dependence(_scene, family, family, false, []).IsLoopVariable(name)));
+        foreach (var node in turn.Nodes)
+        {
+            if (!_scene.Mentions(node, RowsRole.Training))
+                continue;
+            foreach (var symbol in turn.Defines(node))
+            {
+                if (symbol is not (ILocalSymbol or IParameterSymbol or IFieldSymbol) || symbol.DeclaringSyntaxReferences.Length != 1 || family.Span.Contains(symbol.DeclaringSyntaxReferences[0].Span))
+                    continue;
+                bool ofItself = node.DescendantNodesAndSelf().OfType<AssignmentExpressionSyntax>().Any(a => a.Right.DescendantNodesAndSelf().OfType<IdentifierNameSyntax>()
+                    .Any(i => SymbolEqualityComparer.Default.Equals(_scene.Model.GetSymbolInfo(i).Symbol, symbol)) && a.Left.ToString() == symbol.Name);
+                bool copied = kept.Any(k => k.Value is not IdentifierNameSyntax && k.Value.DescendantNodes().OfType<IdentifierNameSyntax>().Any(i => SymbolEqualityComparer.Default.Equals(_scene.Model.GetSymbolInfo(i).Symbol, symbol)));
+                if (!usesCandidate || ofItself || copied)
+                    return symbol;
+            }
+        }
+
+        return null;
     }
 
     private static IdentifierNameSyntax? IdentifierOf(ExpressionSyntax score) => score as IdentifierNameSyntax;

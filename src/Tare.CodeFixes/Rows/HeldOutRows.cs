@@ -111,7 +111,7 @@ internal sealed class HeldOutRows
         if (_scene.Refers("Tare.DataViewHoldOut"))
         {
             Lines.Add(random
-                ? $"var ({_fit[0]}, {_valid[0]}) = DataViewHoldOut.Random({rows}, share: {Share}, seed: 1);"
+                ? $"var ({_fit[0]}, {_valid[0]}) = DataViewHoldOut.Random({rows}, share: {Share}, seed: {Seed()});"
                 : $"var ({_fit[0]}, {_valid[0]}) = DataViewHoldOut.Tail({rows}, share: {Share});");
             Using = "Tare";
             return true;
@@ -121,9 +121,18 @@ internal sealed class HeldOutRows
         if (_scene.Cut == "tail" || ContextName() is not { } context)
             return false;
         string split = _scene.Names.Free("heldOut");
-        Lines.Add($"var {split} = {context}.Data.TrainTestSplit({rows}, testFraction: {Share}, seed: 1);");
+        Lines.Add($"var {split} = {context}.Data.TrainTestSplit({rows}, testFraction: {Share}, seed: {Seed()});");
         Lines.Add($"var ({_fit[0]}, {_valid[0]}) = ({split}.TrainSet, {split}.TestSet);");
         return true;
+    }
+
+    /// <summary>The seed with which the rows were split already, where the code names one.</summary>
+    private string Seed()
+    {
+        string root = _training[0].Text.Split('.')[0];
+        var split = _scene.Model.LookupSymbols(_scene.Choice.SpanStart, name: root).FirstOrDefault();
+        var call = split is { DeclaringSyntaxReferences.Length: 1 } ? (split.DeclaringSyntaxReferences[0].GetSyntax() as VariableDeclaratorSyntax)?.Initializer?.Value as InvocationExpressionSyntax : null;
+        return call?.ArgumentList.Arguments.FirstOrDefault(a => a.NameColon?.Name.Identifier.ValueText == "seed")?.Expression.ToString() is { } seed && seed != "null" ? seed : "1";
     }
 
     private string? ContextName() => _scene.Frame.DescendantNodes().OfType<IdentifierNameSyntax>()
