@@ -29,7 +29,7 @@ public class ChoosingScoreClaimedFixTests
 
     [Fact]
     public Task NotOfferedForALoss() => Mended.OffersNothingAsync(Of("""
-        var best = strengths.Select(s => (s, Loss: Model.Fit(trainX, trainY, s).Loss(validationX, validationY))).MinBy(r => r.Loss);
+        var best = new[] { 0.5, 1, 1.5 }.Select(s => (s, Loss: Model.Fit(trainX, trainY, s).Loss(validationX, validationY))).MinBy(r => r.Loss);
         Console.WriteLine(best.Loss);
         """), Rule);
 

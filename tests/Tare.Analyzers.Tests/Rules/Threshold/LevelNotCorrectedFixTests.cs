@@ -159,9 +159,9 @@ public class LevelNotCorrectedFixTests
 
     [Theory]
     // going through the sequence again would run the tests again
-    [InlineData("IEnumerable<double[]> lazy = readings.Where(r => r.Length > 3); foreach (double[] r in lazy) { if (Permutation.PValue(r, warped) < 0.05) Console.WriteLine(r.Length); }")]
+    [InlineData("foreach (double[] r in streamed) { if (Permutation.PValue(r, warped) < 0.05) Console.WriteLine(r.Length); }")]
     // the list shrinks while it is gone through
-    [InlineData("List<double[]> left = [.. readings]; for (int i = 0; i < left.Count; i++) { if (Permutation.PValue(left[i], warped) > 0.05) left.RemoveAt(i--); }")]
+    [InlineData("for (int i = 0; i < left.Count; i++) { if (Permutation.PValue(left[i], warped) > 0.05) left.RemoveAt(i--); }")]
     // an arm of a switch takes constants only
     [InlineData("foreach (double[] r in readings) Console.WriteLine(Permutation.PValue(r, warped) switch { < 0.05 => \"tells\", _ => \"silent\" });")]
     public Task NotOfferedWhereUnsound(string statement) => Mended.OffersNothingAsync(Of(Program(statement), Libraries.Tare), Rule);
@@ -174,7 +174,7 @@ public class LevelNotCorrectedFixTests
         {
             private const double Alpha = 0.05;
 
-            private static {{returns}} Run(double[][] readings, bool[] warped, double alpha)
+            private static {{returns}} Run(double[][] readings, bool[] warped, double alpha, IEnumerable<double[]> streamed, List<double[]> left)
             {
         {{statements}}
             }
