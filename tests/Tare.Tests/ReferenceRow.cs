@@ -9,7 +9,12 @@ internal sealed class ReferenceRow(string file, int line, string[] columns, stri
 
     public double Number(string column) => double.Parse(Text(column), CultureInfo.InvariantCulture);
 
-    public long Count(string column) => long.Parse(Text(column), CultureInfo.InvariantCulture);
+    /// <summary>A whole number, which some programs write as 1e+05.</summary>
+    public long Count(string column)
+    {
+        double value = Number(column);
+        return value == Math.Floor(value) ? (long)value : throw new FormatException($"{this}: {column} is no whole number");
+    }
 
     public bool Has(string column) => Text(column) != "NA";
 

@@ -119,7 +119,7 @@ internal sealed class Choice
 internal sealed record Claim(SyntaxNode Place, Value Value, Frame Frame, int Order, IdSet Running, string? Name);
 
 /// <summary>A model learned from some rows is applied to others.</summary>
-internal sealed record Meeting(int Fitted, int Scored, IdSet Varies, IdSet Wins, int Order);
+internal sealed record Meeting(int Fitted, int Scored, IdSet Varies, IdSet Wins, int Order, bool Stored);
 
 /// <summary>A quantity over rows came into being.</summary>
 internal sealed record Birth(int Site, SyntaxNode Place, int Rows, IdSet Wins, int Order, Frame Frame);

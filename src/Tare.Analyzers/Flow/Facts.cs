@@ -100,7 +100,7 @@ internal sealed class Facts
         return id;
     }
 
-    public bool Meet(int fitted, int scored, IdSet varies, IdSet wins)
+    public bool Meet(int fitted, int scored, IdSet varies, IdSet wins, bool stored)
     {
         _met.Add((fitted, scored));
         if (Meetings.Count > 20000)
@@ -108,11 +108,11 @@ internal sealed class Facts
         for (int i = Meetings.Count - 1; i >= 0 && i >= Meetings.Count - 60; i--)
         {
             var m = Meetings[i];
-            if (m.Fitted == fitted && m.Scored == scored && m.Varies.ContainsAll(varies) && m.Wins.ContainsAll(wins))
+            if (m.Fitted == fitted && m.Scored == scored && m.Varies.ContainsAll(varies) && m.Wins.ContainsAll(wins) && m.Stored == stored)
                 return false;
         }
 
-        Meetings.Add(new Meeting(fitted, scored, varies, wins, Order++));
+        Meetings.Add(new Meeting(fitted, scored, varies, wins, Order++, stored));
         return true;
     }
 

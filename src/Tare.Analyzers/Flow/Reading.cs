@@ -69,6 +69,8 @@ internal sealed class Reading
             if (other == id)
                 continue;
             var part = Facts.Rows[other];
+            if (part.PointsInto.Contains(id) && _roles.Of(other).Evidence != Evidence.None)
+                return false;
             if ((part.IsWithin(Facts.Rows[id]) || part.PointsInto.Contains(id)) && _roles.Of(other).Evidence >= _roles.Of(id).Evidence && _roles.Of(other).Role != Role.Training)
                 return false;
             if (part.IsWithin(Facts.Rows[id]) && _roles.Of(id).Evidence == Evidence.None && _roles.Of(other).Evidence != Evidence.None)

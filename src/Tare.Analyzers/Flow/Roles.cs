@@ -96,7 +96,7 @@ internal sealed class Roles
     {
         foreach (var meeting in _facts.Meetings)
         {
-            if (_facts.Rows[meeting.Fitted].Root == rows.Root && _facts.Rows[meeting.Scored].Root == rows.Root
+            if (meeting.Stored && _facts.Rows[meeting.Fitted].Root == rows.Root && _facts.Rows[meeting.Scored].Root == rows.Root
                 && (meeting.Fitted == meeting.Scored || Related(meeting.Fitted, meeting.Scored)) && Related(meeting.Scored, rows.Id))
                 return true;
         }
@@ -163,11 +163,11 @@ internal sealed class Roles
                 return (fitted && !scored ? Role.Training : parent.Role, parent.Evidence);
         }
 
-        if (fitted && (!scored || FittedMore(rows)))
+        if (fitted && (!scored || FittedMore(rows)) && !(rows.Parent is null && HasParts(rows)))
             return (Role.Training, Evidence.Known);
         if (rows.Source == Source.Part && IsRealPart(rows) && (scored || SiblingFitted(rows)))
             return (Role.Test, Evidence.Known);
-        if (scored && rows.Parent is null && ScoredByTraining(rows))
+        if (scored && rows.Parent is null && !HasParts(rows) && ScoredByTraining(rows))
             return (Role.Test, Evidence.Known);
         if (rows.Parent is not null)
             return parent.Role is Role.Unknown ? parent : (parent.Role, Evidence.None);
@@ -218,6 +218,18 @@ internal sealed class Roles
         {
             if (other != rows && other.Parent == rows.Parent && other.Source == Source.Part && other.Key != rows.Key
                 && (rows.Cut != Cut.Filter || other.Key == rows.OtherKey || rows.Key == other.OtherKey || other.Key!.StartsWith("if@", StringComparison.Ordinal)))
+                return true;
+        }
+
+        return false;
+    }
+
+    /// <summary>It was cut into parts, or others hold indices into it: then those have the roles.</summary>
+    private bool HasParts(RowSet rows)
+    {
+        foreach (var other in _facts.Rows)
+        {
+            if (other.PointsInto.Contains(rows.Id) || other.Parent == rows && other.Source == Source.Part && other.Cut != Cut.Filter)
                 return true;
         }
 

@@ -38,11 +38,9 @@ internal sealed class State
         {
             var before = Get(pair.Key);
             var after = always || before is null ? pair.Value : before.Join(pair.Value);
-            if (before is null || !after.Same(before))
-            {
-                _values[pair.Key] = after;
-                changed = true;
-            }
+            // set even when it says nothing new: a loop closes what its body set
+            changed |= before is null || !after.Same(before);
+            _values[pair.Key] = after;
         }
 
         return changed;

@@ -27,6 +27,9 @@ internal enum Traits
 
     /// <summary>The smallest or largest of a family.</summary>
     Extreme = 64,
+
+    /// <summary>Came out of an array, a field or an object, as what was learned does; a passing statistic does not.</summary>
+    Stored = 128,
 }
 
 /// <summary>What is known of one value. Immutable; <see cref="Join"/> gives what holds on either path.</summary>

@@ -161,18 +161,21 @@ internal sealed partial class Walker
     {
         var body = _bodies.Of(method);
         var definition = method.OriginalDefinition;
-        if (body is null || _frame.Level >= MaxCallDepth || Recurses(definition))
+        // what a recursion adds joins with what its end gives: nothing until then
+        if (body is not null && Recurses(definition))
+            return Value.Empty;
+        if (body is null || _frame.Level >= MaxCallDepth)
             return ByArguments(instance, arguments, method.ReturnType, syntax);
         _facts.Reached.Add(definition);
         return Run(definition, body, instance, arguments, syntax, method.MethodKind == MethodKind.LocalFunction, outs);
     }
 
-    private bool Recurses(IMethodSymbol method)
+    private bool Recurses(IMethodSymbol method, int most = 2)
     {
         int times = 0;
         for (var f = _frame; f is not null; f = f.Parent)
         {
-            if (SymbolEqualityComparer.Default.Equals(f.Method, method) && ++times >= 2)
+            if (SymbolEqualityComparer.Default.Equals(f.Method, method) && ++times >= most)
                 return true;
         }
 
@@ -307,11 +310,11 @@ internal sealed partial class Walker
         if (_bodies.Of(method) is not null || method.MethodKind == MethodKind.LocalFunction)
         {
             // `Fit` as a method group on a parameter: an instance method of an element
-            return Call(method, closure.Instance, ImmutableArray.Create(arguments), syntax);
+            return NamedTraits(Call(method, closure.Instance, ImmutableArray.Create(arguments), syntax), method.Name, method.ReturnType);
         }
 
         if (ImplementationsOf(method, closure.Instance) is { Count: > 0 } targets)
-            return Call(targets[0], closure.Instance, ImmutableArray.Create(arguments), syntax);
+            return NamedTraits(Call(targets[0], closure.Instance, ImmutableArray.Create(arguments), syntax), method.Name, method.ReturnType);
         if (_catalogue.TryGet(method, out var entry))
             return Known(entry, method, closure.Instance, syntax, method.ReturnType, arguments);
         return ByArguments(closure.Instance, ImmutableArray.Create(arguments), method.ReturnType, syntax);

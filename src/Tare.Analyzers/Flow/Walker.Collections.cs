@@ -229,14 +229,15 @@ internal sealed partial class Walker
 
         if (first)
             return collection.With(objects: IdSet.Empty, closures: IdSet.Empty);
-        return element.Tagged(collection.Tags).Winning(collection.Wins).Varying(collection.Varies);
+        element = element.Tagged(collection.Tags).Winning(collection.Wins).Varying(collection.Varies);
+        return collection.Indexed.IsEmpty ? element : element.With(indexed: element.Indexed.Union(collection.Indexed));
     }
 
     private Value ElementOf(HeapObject o)
     {
         if (!o.IsCollection && o.Rows is null)
             return o.Content.Join(o.Element);
-        var element = o.Element;
+        var element = Stored(o.Element);
         if (o.Key is { IsEmpty: false } && IsDictionary(o.Type))
             element = Pair(o.Key, element);
         if (!o.Content.IsEmpty && o.Element.IsEmpty)
@@ -251,6 +252,9 @@ internal sealed partial class Walker
             element = element.With(indexed: element.Indexed.Union(o.Per));
         return element;
     }
+
+    private static Value Stored(Value value) =>
+        value.Has(Traits.Stored) || !Tag.Has(value.Tags, Level.Aggregate) ? value : value.With(traits: value.Traits | Traits.Stored);
 
     private static Value Tagged(Value value, IdSet tags) =>
         value.Fields is null ? value.Tagged(tags) : value.With(tags: value.Tags.Union(tags), fields: value.MapFields(f => f.IsEmpty || f.Number is not null ? f.Tagged(tags) : f));
@@ -360,6 +364,10 @@ internal sealed partial class Walker
         var index = Value.Empty;
         foreach (var i in indices)
             index = index.Combine(Expression(i));
+        // a column by its name holds the same rows
+        if (indices.Count == 1 && indices[0].Type?.SpecialType == SpecialType.System_String && collection.Objects.Count == 1
+            && _facts.Objects[collection.Objects.First()] is { Rows: not null } table && !IsDictionary(table.Type))
+            return collection;
         if (indices.Count > 1)
         {
             // a table: the first index goes down the rows, the others along one
@@ -403,7 +411,7 @@ internal sealed partial class Walker
                 continue;
             }
 
-            var element = o.Element.Join(o.Content);
+            var element = Stored(o.Element.Join(o.Content));
             if (o.Rows is not null)
                 element = Tagged(element, IdSet.Of(Tag.Of(o.Rows.Id, Level.Element)));
             if (!o.SizeVaries.IsEmpty)
@@ -452,7 +460,8 @@ internal sealed partial class Walker
         {
             var scope = _loops[i];
             bool random = index.Has(Traits.Random) && i == _loops.Count - 1;
-            if (!random && !moved.Overlaps(scope.Origins))
+            // an index computed from data goes where the data says, not where the loop goes
+            if (!random && (!index.Tags.IsEmpty || !moved.Overlaps(scope.Origins)))
                 continue;
             if (!rows.IsEmpty && !scope.Rows.ContainsAll(rows))
             {
@@ -510,7 +519,7 @@ internal sealed partial class Walker
         var rows = RowsThrough(collection, o).Where(r => !IsRunning(r));
         element = CloseValue(element, origins, rows, syntax, 4);
         var order = key.With(tags: Tag.Move(key.Tags, Level.Element, Level.Aggregate, rows.Contains));
-        if (!rows.IsEmpty)
+        if (Tag.At(key.Tags, Level.Element).Overlaps(rows))
             element = Tagged(element, order.Tags);
         return (choice is null ? element : element.Winning(IdSet.Of(choice.Id))).Tagged(collection.Tags).Winning(collection.Wins);
     }

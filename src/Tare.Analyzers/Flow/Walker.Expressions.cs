@@ -229,7 +229,7 @@ internal sealed partial class Walker
     private Value ReadMember(Value instance, string name, ISymbol member, ITypeSymbol type)
     {
         if (instance.Fields is not null && instance.Fields.TryGetValue(name, out var held))
-            return held.Winning(instance.Wins).Varying(instance.Varies).Tagged(instance.Tags.Where(t => Tag.LevelOf(t) == Level.Aggregate));
+            return NamedTraits(held.Winning(instance.Wins).Varying(instance.Varies).Tagged(instance.Tags.Where(t => Tag.LevelOf(t) == Level.Aggregate)), member.Name, type);
         var result = Value.Empty;
         bool found = false;
         foreach (int id in instance.Objects)
@@ -275,7 +275,7 @@ internal sealed partial class Walker
                 result = result.With(indexed: result.Indexed.Union(instance.Indexed));
         }
 
-        return NamedTraits(result, member.Name, type);
+        return NamedTraits(Stored(result), member.Name, type);
     }
 
     private static bool IsCaptured(ISymbol member) => member is IPropertySymbol { IsIndexer: true };
@@ -373,7 +373,11 @@ internal sealed partial class Walker
         }
 
         if (left.Number is { } a && right.Number is { } b && Counting.Apply(binary.OperatorKind, a, b) is { } number)
-            return new Value { Number = number, Traits = (left.Traits | right.Traits) & Traits.Corrected };
+        {
+            bool divided = binary.OperatorKind == BinaryOperatorKind.Divide && IsLevel(left) && b > 2;
+            return new Value { Number = number, Traits = ((left.Traits | right.Traits) & Traits.Corrected) | (divided ? Traits.Corrected : Traits.None) };
+        }
+
         return Arithmetic(binary, left, right);
     }
 
@@ -561,6 +565,15 @@ internal sealed partial class Walker
 
                 return result;
             default:
+                foreach (var part in pattern.Descendants())
+                {
+                    if (part is IDeclarationPatternOperation { DeclaredSymbol: ILocalSymbol inner })
+                    {
+                        Declare(inner);
+                        _state.Set(inner, RowsTypes.IsCollection(subject.Type) && !value.Objects.IsEmpty ? ElementOf(value, subject.Syntax) : value.With(closures: IdSet.Empty));
+                    }
+                }
+
                 return value.With(closures: IdSet.Empty);
         }
     }

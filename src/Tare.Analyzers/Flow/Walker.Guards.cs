@@ -34,7 +34,7 @@ internal sealed partial class Walker
         for (int i = fromGuard; i < _guards.Count; i++)
         {
             var condition = _guards[i].Condition;
-            if (IsOfOneRow(condition))
+            if (!IsLoopCondition(_guards[i].Syntax) && IsOfOneRow(condition))
             {
                 value = value.With(
                     tags: value.Tags.Union(condition.Tags), varies: value.Varies.Union(condition.Varies), indexed: value.Indexed.Union(condition.Indexed),
@@ -75,7 +75,7 @@ internal sealed partial class Walker
         {
             var condition = _guards[i].Condition;
             bool innermost = i == _guards.Count - 1 && !IsLoopCondition(_guards[i].Syntax) && _guards[i].LoopDepth == _loops.Count;
-            if (innermost && !condition.Compares.IsEmpty || IsOfOneRow(condition))
+            if (innermost && !condition.Compares.IsEmpty || !IsLoopCondition(_guards[i].Syntax) && IsOfOneRow(condition))
             {
                 value = value.With(
                     tags: value.Tags.Union(condition.Tags), varies: value.Varies.Union(condition.Varies), indexed: value.Indexed.Union(condition.Indexed), sites: value.Sites.Union(condition.Sites));
@@ -323,7 +323,8 @@ internal sealed partial class Walker
         foreach (var row in Tag.At(p.Tags, Level.Aggregate).Union(Tag.At(p.Tags, Level.Element)))
             family = family.Union(_facts.Rows[row].Varies.Intersect(RunningOrigins()));
         family = family.Union(p.Over);
-        if (family.IsEmpty)
+        // a rule that a tree applies to itself at every node prunes; it picks no finding out of a family
+        if (family.IsEmpty || _frame.Method is not null && Recurses(_frame.Method, 2))
             return;
         if (IsLoopConditionOf(operation, family))
             return;

@@ -100,15 +100,25 @@ internal sealed partial class Walker
         if (o.IsWindow)
             return IdSet.Empty;
         var rows = o.Rows is null ? IdSet.Empty : IdSet.Of(o.Rows.Id);
-        if (o.IsCollection)
-            rows = rows.Union(Tag.At(o.Element.Tags, Level.Element));
-        if (o.IsCollection && o.Element.Fields is not null)
+        if (!o.IsCollection)
+            return rows;
+        var held = Tag.At(o.Element.Tags, Level.Element);
+        if (o.Element.Fields is not null)
         {
             foreach (var field in o.Element.Fields.Values)
-                rows = rows.Union(Tag.At(field.Tags, Level.Element));
+                held = held.Union(Tag.At(field.Tags, Level.Element));
         }
 
-        return rows;
+        // one element a row: the loops that stored them went through those rows
+        if (o.Rows is null && !o.Per.IsEmpty && !held.IsEmpty)
+        {
+            var through = IdSet.Empty;
+            foreach (int origin in o.Per)
+                through = through.Union(_facts.Origins[origin].Rows);
+            held = held.Where(r => through.Contains(r) || Related(through, r));
+        }
+
+        return rows.Union(held);
     }
 
     /// <summary>
@@ -182,7 +192,7 @@ internal sealed partial class Walker
                 continue;
             rows ??= EnsureRows(o, syntax);
             var running = bounds.Varies.Union(bounds.Indexed).Intersect(RunningOrigins());
-            n.IsWindow = OverRows(running, rows) || IsTentative(running);
+            n.IsWindow = cut != Cut.Filter && (OverRows(running, rows) || IsTentative(running));
             if (n.IsWindow)
             {
                 n.Element = n.Element.Tagged(IdSet.Of(Tag.Of(rows.Id, Level.Element)));
@@ -310,7 +320,7 @@ internal sealed partial class Walker
             {
                 if (Tag.LevelOf(r) == Level.Aggregate)
                     continue;
-                _facts.Meet(Tag.Rows(m), Tag.Rows(r), model.Varies, model.Wins.Union(rows.Wins));
+                _facts.Meet(Tag.Rows(m), Tag.Rows(r), model.Varies, model.Wins.Union(rows.Wins), model.Has(Traits.Stored));
             }
         }
     }

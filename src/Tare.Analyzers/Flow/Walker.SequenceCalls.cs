@@ -532,7 +532,7 @@ internal sealed partial class Walker
         element = CloseValue(element, origins, rows, syntax, 4);
         // the row nearest to another: which one depends on all of them
         var order = key.With(tags: Tag.Move(key.Tags, Level.Element, Level.Aggregate, rows.Contains));
-        if (!rows.IsEmpty)
+        if (Tag.At(key.Tags, Level.Element).Overlaps(rows))
             element = Tagged(element, order.Tags);
         return choice is null ? element : element.Winning(IdSet.Of(choice.Id));
     }

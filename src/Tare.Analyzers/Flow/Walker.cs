@@ -1,4 +1,5 @@
 using Microsoft.CodeAnalysis;
+using Microsoft.CodeAnalysis.CSharp.Syntax;
 using Tare.Analyzers.Knowledge;
 
 namespace Tare.Analyzers.Flow;
@@ -24,6 +25,7 @@ internal sealed partial class Walker
     private readonly Dictionary<SyntaxNode, int> _closureIds = new();
     private readonly Stack<Value> _conditionalReceivers = new();
     private readonly Stack<Value> _initialised = new();
+    private readonly HashSet<int> _begun = new();
     private readonly int _budget;
 
     private State _state = new();
@@ -68,7 +70,21 @@ internal sealed partial class Walker
     public HeapObject InstanceOf(INamedTypeSymbol type)
     {
         var syntax = type.DeclaringSyntaxReferences[0].GetSyntax();
-        return _facts.ObjectAt(syntax, 0, type, 0);
+        var o = _facts.ObjectAt(syntax, 0, type, 0);
+        if (_begun.Add(o.Id))
+        {
+            var self = Ref(o);
+            InitialiseMembers(o, self, type);
+            foreach (var constructor in type.InstanceConstructors)
+            {
+                if (constructor.DeclaringSyntaxReferences.Length == 0 || constructor.DeclaringSyntaxReferences[0].GetSyntax() is not TypeDeclarationSyntax)
+                    continue;
+                var values = constructor.Parameters.Select(RootParameter).ToArray();
+                Primary(o, type, constructor, values, syntax);
+            }
+        }
+
+        return o;
     }
 
     private Value RootParameter(IParameterSymbol parameter)

@@ -1,7 +1,7 @@
 namespace Tare;
 
 /// <summary>Confidence interval for the difference of two classifiers' accuracies on the same rows. It assumes independent rows.</summary>
-public static class PairedProportionInterval
+public static partial class PairedProportionInterval
 {
     /// <summary>Newcombe's square-and-add interval of Wilson limits with corrected correlation (his method 10); approximate, good from small samples on.</summary>
     /// <param name="bothRight">Rows both get right, at least 0.</param>

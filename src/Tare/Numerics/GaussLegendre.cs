@@ -4,7 +4,7 @@ namespace Tare;
 internal static class GaussLegendre
 {
     private const int Order = 24;
-    private static readonly double[] Nodes = new double[Order];
+    private static readonly double[] Roots = new double[Order];
     private static readonly double[] Weights = new double[Order];
 
     // Roots of the Legendre polynomial by Newton's method from Tricomi's start.
@@ -26,7 +26,7 @@ internal static class GaussLegendre
                     break;
             }
 
-            Nodes[i] = x;
+            Roots[i] = x;
             Weights[i] = 2 / ((1 - x * x) * slope * slope);
         }
     }
@@ -38,9 +38,27 @@ internal static class GaussLegendre
         {
             double middle = from + (2 * panel + 1) * half;
             for (int i = 0; i < Order; i++)
-                sum += Weights[i] * function(middle + half * Nodes[i]);
+                sum += Weights[i] * function(middle + half * Roots[i]);
         }
 
         return sum * half;
+    }
+
+    /// <summary>The points and weights themselves, for sums over a fixed grid.</summary>
+    public static (double[] Points, double[] Weights) Nodes(double from, double to, int panels)
+    {
+        double half = (to - from) / (2 * panels);
+        double[] points = new double[panels * Order], weights = new double[panels * Order];
+        for (int panel = 0, at = 0; panel < panels; panel++)
+        {
+            double middle = from + (2 * panel + 1) * half;
+            for (int i = Order - 1; i >= 0; i--, at++)
+            {
+                points[at] = middle + half * Roots[i];
+                weights[at] = half * Weights[i];
+            }
+        }
+
+        return (points, weights);
     }
 }

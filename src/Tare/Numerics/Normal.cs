@@ -74,7 +74,7 @@ internal static class Normal
     // Upper tail over density: 1/(z+1/(z+2/(z+3/(z+...)))) (Abramowitz and Stegun 26.2.14), evaluated from the far end.
     private static double MillsRatio(double z)
     {
-        int terms = (int)Math.Min(600, 30 + 1200 / (z * z));
+        int terms = (int)(9 + 460 / (z * z));
         double tail = z;
         for (int k = terms; k >= 1; k--)
             tail = z + k / tail;

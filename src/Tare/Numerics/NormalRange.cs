@@ -27,21 +27,12 @@ internal static class NormalRange
         return Math.Min(1, k * sum);
     }
 
-    /// <summary>q with P(range > q) = level, by bisection.</summary>
+    /// <summary>q with P(range > q) = level.</summary>
     public static double UpperQuantile(double level, int k)
     {
-        double low = 0, high = 8;
+        double high = 8;
         while (Upper(high, k) > level && high < 80)
             high *= 1.5;
-        for (int step = 0; step < 200 && high - low > 1e-14 * high; step++)
-        {
-            double middle = 0.5 * (low + high);
-            if (Upper(middle, k) > level)
-                low = middle;
-            else
-                high = middle;
-        }
-
-        return 0.5 * (low + high);
+        return Root.Find(q => Math.Log(Upper(q, k) / level), 1e-9, high, 1e-14);
     }
 }

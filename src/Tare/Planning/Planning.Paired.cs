@@ -135,16 +135,7 @@ public static partial class Planning
                 throw Check.OutOfRange(nameof(difference), difference, "is too small against the standard deviation to be planned for");
         }
 
-        for (int step = 0; step < 200 && high - low > 1e-12 * high; step++)
-        {
-            double middle = 0.5 * (low + high);
-            if (PairedTPower(middle, difference, standardDeviation, level, comparisons) < power)
-                low = middle;
-            else
-                high = middle;
-        }
-
-        return 0.5 * (low + high);
+        return Root.Find(rows => PairedTPower(rows, difference, standardDeviation, level, comparisons) - power, low, high, 1e-13);
     }
 
     /// <summary>Power of the two-sided paired t test.</summary>

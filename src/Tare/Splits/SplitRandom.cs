@@ -10,6 +10,18 @@ internal sealed class SplitRandom
 
     public SplitRandom(int seed) => _state = unchecked((ulong)seed * 0xD1342543DE82EF95UL + 0x2545F4914F6CDD1DUL);
 
+    /// <summary>One of many streams of a seed, each as good as independent of the others.</summary>
+    public SplitRandom(int seed, long stream)
+        : this(seed)
+    {
+        unchecked
+        {
+            ulong own = Next() + (ulong)stream * 0xD1B54A32D192ED03UL;
+            own = (own ^ (own >> 32)) * 0xD6E8FEB86659FD93UL;
+            _state ^= own ^ (own >> 32);
+        }
+    }
+
     /// <summary>A whole number from 0 to below <paramref name="bound"/>.</summary>
     public int Below(int bound)
     {
@@ -23,6 +35,12 @@ internal sealed class SplitRandom
         while (draw >= limit);
         return (int)(draw % width);
     }
+
+    /// <summary>A number strictly between 0 and 1, in steps of 2^-53.</summary>
+    public double Fraction() => ((Next() >> 11) + 0.5) * (1.0 / 9007199254740992);
+
+    /// <summary>64 random bits.</summary>
+    public ulong Bits() => Next();
 
     /// <summary>Durstenfeld's shuffle (1964).</summary>
     public void Shuffle(int[] items)

@@ -31,8 +31,10 @@ public static class WilcoxonTest
         foreach (int rank in doubled)
         {
             reach += rank;
-            for (int w = reach; w >= 0; w--)
-                law[w] = 0.5 * ((w <= reach - rank ? law[w] : 0) + (w >= rank ? law[w - rank] : 0));
+            for (int w = reach; w >= rank; w--)
+                law[w] = 0.5 * (law[w] + law[w - rank]);
+            for (int w = rank - 1; w >= 0; w--)
+                law[w] *= 0.5;
         }
 
         int seen = (int)(2 * plus);

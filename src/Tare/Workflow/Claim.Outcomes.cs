@@ -106,16 +106,17 @@ public static partial class Claim
     }
 
     // Both sequences together; one that ends first is an error, never a silent cut.
-    private static IEnumerable<(T First, T Second)> InStep<T>(IEnumerable<T> first, string firstName, IEnumerable<T> second, string secondName)
+    private static IEnumerable<(T First, TOther Second)> InStep<T, TOther>(
+        IEnumerable<T> first, string firstName, IEnumerable<TOther> second, string secondName)
     {
         Check.NotNull(first, firstName);
         Check.NotNull(second, secondName);
         return Walk();
 
-        IEnumerable<(T, T)> Walk()
+        IEnumerable<(T, TOther)> Walk()
         {
             using IEnumerator<T> one = first.GetEnumerator();
-            using IEnumerator<T> other = second.GetEnumerator();
+            using IEnumerator<TOther> other = second.GetEnumerator();
             long rows = 0;
             while (true)
             {

@@ -7,15 +7,21 @@ internal readonly record struct MeanTest(string Name, double PValue, double Lowe
     {
         if (values.Count < 2)
             throw new ArgumentException($"'{rowsName}' has {Check.Text(values.Count)} rows; a mean's claim needs at least 2.", rowsName);
-        double df = values.Count - 1, error = Math.Sqrt(values.Variance / values.Count);
+        double error = Math.Sqrt(values.Variance / values.Count);
         if (!Check.IsFinite(values.Mean) || !Check.IsFinite(error))
             throw new ArgumentException($"The values in '{rowsName}' are too large to average.", rowsName);
-        double difference = values.Mean - baseline;
+        return OfError(values.Mean, error, values.Count, baseline, side, level);
+    }
+
+    /// <summary>The same from a mean, its standard error and the number of independent units.</summary>
+    public static MeanTest OfError(double mean, double error, long units, double baseline, Side side, double level)
+    {
+        double df = units - 1, difference = mean - baseline;
         if (error == 0)
         {
             // t does not exist; all differences have one sign, and the sign test still knows how surprising that is.
-            long positive = difference > 0 ? values.Count : 0, negative = difference < 0 ? values.Count : 0;
-            return new MeanTest("exact sign test", SignTest.PValue(positive, negative, side), values.Mean, values.Mean);
+            long positive = difference > 0 ? units : 0, negative = difference < 0 ? units : 0;
+            return new MeanTest("exact sign test", SignTest.PValue(positive, negative, side), mean, mean);
         }
 
         Tails tails = StudentT.Tails(difference / error, df);
@@ -29,7 +35,7 @@ internal readonly record struct MeanTest(string Name, double PValue, double Lowe
         return new MeanTest(
             "t test",
             p,
-            side == Side.Less ? double.NegativeInfinity : values.Mean - reach,
-            side == Side.Greater ? double.PositiveInfinity : values.Mean + reach);
+            side == Side.Less ? double.NegativeInfinity : mean - reach,
+            side == Side.Greater ? double.PositiveInfinity : mean + reach);
     }
 }

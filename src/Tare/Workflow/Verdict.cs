@@ -11,6 +11,7 @@ public sealed record Verdict
         Metric = metric;
         Value = value;
         Rows = rows;
+        Units = rows;
         FamilyLevel = looks.FamilyLevel;
         Level = looks.Level;
         Candidates = looks.Candidates;
@@ -26,8 +27,11 @@ public sealed record Verdict
     /// <summary>Test rows n.</summary>
     public long Rows { get; }
 
-    /// <summary>What was assumed to be independent of each other: the row.</summary>
+    /// <summary>What was assumed to be independent of each other: the row, or the group of rows.</summary>
     public string Unit { get; internal init; } = "row";
+
+    /// <summary>How many independent units there are: <see cref="Rows"/> unless rows come in groups.</summary>
+    public long Units { get; internal init; }
 
     /// <summary>What the value is compared with; null when nothing was given.</summary>
     public double? Baseline { get; internal init; }
@@ -85,6 +89,8 @@ public sealed record Verdict
         if (Passed is { } passed)
             line.Append(passed ? "passed: " : "not passed: ");
         line.Append(Metric).Append(' ').Append(Plain.Number(Value)).Append(" on ").Append(Plain.Count(Rows)).Append(Rows == 1 ? " row" : " rows");
+        if (Unit != "row")
+            line.Append(" in ").Append(Plain.Count(Units)).Append(' ').Append(Unit).Append('s');
         if (Passed is { } decided)
             AppendTest(line, decided);
         if (Lower is { } lower && Upper is { } upper)

@@ -46,10 +46,10 @@ public class ExactTestTests
         }
     }
 
-    /// <summary>MathNet.Numerics as oracle where it is accurate: tails that are not small.</summary>
+    /// <summary>MathNet.Numerics as oracle where it is accurate: tails that are not small, below the last count (where it fails).</summary>
     [Fact]
     public void Tails_agree_with_MathNet() =>
-        Gen.Select(Gen.Int[1, 300], Gen.Double[0.01, 0.99]).SelectMany((n, p) => Gen.Int[0, n].Select(k => (n, p, k))).Sample(t =>
+        Gen.Select(Gen.Int[1, 300], Gen.Double[0.01, 0.99]).SelectMany((n, p) => Gen.Int[0, n - 1].Select(k => (n, p, k))).Sample(t =>
         {
             double want = Oracle.CDF(t.p, t.n, t.k);
             return Math.Abs(want - BinomialTest.PValue(t.k, t.n, t.p, Side.Less)) < 1e-9;

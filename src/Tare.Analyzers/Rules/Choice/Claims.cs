@@ -17,7 +17,7 @@ internal static class Claims
                 var choice = reading.Facts.Choices[id];
                 if (choice.IsPValue || choice.Family.Overlaps(claim.Running))
                     continue;
-                if (reading.RowsOf(choice) is not { } rows || !CarriesScore(reading, claim, choice))
+                if (reading.RowsOf(choice) is not { } rows || !CarriesScore(reading, claim, choice, rows))
                     continue;
                 onTest |= rows.Role == Role.Test;
                 if (Array.IndexOf(roles, rows.Role) >= 0)
@@ -29,12 +29,14 @@ internal static class Claims
         }
     }
 
-    private static bool CarriesScore(Reading reading, Claim claim, Flow.Choice choice)
+    private static bool CarriesScore(Reading reading, Claim claim, Flow.Choice choice, ChoiceRows rows)
     {
         var claimed = Tag.At(claim.Value.Tags, Level.Aggregate);
-        foreach (int r in reading.Effective(choice.Rows))
+        if (claimed.Contains(rows.Rows.Id))
+            return true;
+        foreach (var same in reading.SameRole(choice, reading.Roles.Of(rows.Rows.Id).Role))
         {
-            if (claimed.Contains(r) && reading.Roles.Of(r).Role is not (Role.Training or Role.None))
+            if (claimed.Contains(same.Id))
                 return true;
         }
 
