@@ -1,3 +1,4 @@
+using Microsoft.CodeAnalysis;
 using Tare.Analyzers.Tests.Infrastructure;
 
 namespace Tare.Analyzers.Tests.Rules.Threshold;
@@ -7,7 +8,7 @@ public class LevelNotCorrectedFixTests
 {
     private const string Rule = "TARE201";
 
-    private const string Permutation =
+    internal const string Permutation =
         """
         internal static class Permutation
         {
@@ -155,6 +156,36 @@ public class LevelNotCorrectedFixTests
         string program = Program("foreach (double[] reading in readings)\n{\n    if (Permutation.PValue(reading, warped) < 0.05)\n        Console.WriteLine(reading.Length);\n}").Replace("\r\n", "\n", StringComparison.Ordinal).Replace("\n", "\r\n", StringComparison.Ordinal);
         string mended = await Mended.AllAsync(Of(program, Libraries.Tare), Rule);
         Assert.Equal(mended.Split('\n').Length, mended.Split("\r\n").Length);
+    }
+
+    [Theory]
+    [InlineData(Libraries.None, "< 1 - Math.Pow(1 - 0.05, 1.0 / readings.Length))")]
+    [InlineData(Libraries.Tare, "< Thresholds.Sidak(0.05, readings.Length))")]
+    public async Task SidakWhereTheProjectAsksForIt(Libraries libraries, string expected)
+    {
+        var project = Of(Program("foreach (double[] r in readings) { if (Permutation.PValue(r, warped) < 0.05) Console.WriteLine(r.Length); }"), libraries).ToProject();
+        var found = Assert.Single(await Analysis.FindAsync(project));
+        var asked = Diagnostic.Create(
+            found.Descriptor, found.Location, found.AdditionalLocations, found.Properties.SetItem("tare.correction", "sidak"), found.GetMessage());
+        var mended = await Fixes.ApplyAsync(project, Assert.Single(await Fixes.OfferedAsync(project, asked)));
+        Assert.Contains(expected, await Fixes.TextAsync(mended));
+        Assert.Empty(await Analysis.FindAsync(mended));
+    }
+
+    [Fact]
+    public async Task LinkedDocumentUsesOnlyWhatEveryTargetHas()
+    {
+        string program = Program("foreach (double[] r in readings) { if (Permutation.PValue(r, warped) < 0.05) Console.WriteLine(r.Length); }");
+        var project = Of(program, Libraries.Tare).ToProject();
+        // the same files again, in a target without the runtime library
+        var other = project.Solution.AddProject("Other", "Other", LanguageNames.CSharp).WithMetadataReferences(LibraryReferences.Of(Libraries.None))
+            .WithCompilationOptions(project.CompilationOptions!).WithParseOptions(project.ParseOptions!);
+        foreach (var document in project.Documents)
+            other = other.AddDocument(document.Name, await document.GetTextAsync(), filePath: document.FilePath).Project;
+        project = other.Solution.GetProject(project.Id)!;
+        var finding = Assert.Single(await Analysis.FindAsync(project));
+        var mended = await Fixes.ApplyAsync(project, Assert.Single(await Fixes.OfferedAsync(project, finding)));
+        Assert.Contains("< 0.05 / readings.Length)", await Fixes.TextAsync(mended));
     }
 
     [Theory]
