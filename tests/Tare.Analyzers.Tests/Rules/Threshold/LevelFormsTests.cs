@@ -39,6 +39,7 @@ public class LevelFormsTests
 
     [Theory]
     [InlineData("for (int i = 0; i < readings.Length; i++) { if (Permutation.PValue(readings[i], warped) < 0.05 / readings.Length) Console.WriteLine(i); }")]
+    [InlineData("double[][] two = [readings[0], readings[1]]; foreach (double[] r in two) { if (Permutation.PValue(r, warped) < 0.05 / two.Length) Console.WriteLine(r.Length); }")]
     [InlineData("double level = alpha / readings.Length; foreach (double[] r in readings) { if (Permutation.PValue(r, warped) < level) Console.WriteLine(r.Length); }")]
     [InlineData("double level = 1 - Math.Pow(1 - alpha, 1.0 / readings.Length); foreach (double[] r in readings) { if (Permutation.PValue(r, warped) < level) Console.WriteLine(r.Length); }")]
     [InlineData("foreach (double[] r in readings) { if (Permutation.PValue(r, warped) < Tare.Thresholds.Bonferroni(0.05, readings.Length)) Console.WriteLine(r.Length); }")]
