@@ -374,7 +374,7 @@ internal sealed partial class Walker
 
         if (left.Number is { } a && right.Number is { } b && Counting.Apply(binary.OperatorKind, a, b) is { } number)
         {
-            bool divided = binary.OperatorKind == BinaryOperatorKind.Divide && IsLevel(left) && b > 2;
+            bool divided = binary.OperatorKind == BinaryOperatorKind.Divide && IsLevel(left) && !IsHalf(right) && b >= 2;
             return new Value { Number = number, Traits = ((left.Traits | right.Traits) & Traits.Corrected) | (divided ? Traits.Corrected : Traits.None) };
         }
 
@@ -407,7 +407,8 @@ internal sealed partial class Walker
         return value;
     }
 
-    private static bool IsHalf(Value value) => value.Number is 1 or 2;
+    /// <summary>A bare 2 halves a level for two sides; a count that happens to be 2 corrects it.</summary>
+    private static bool IsHalf(Value value) => value is { Number: 1 or 2, CountText: null };
 
     private static bool IsSmallNumber(Value value) => value.Number is <= 2;
 

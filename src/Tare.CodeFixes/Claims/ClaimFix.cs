@@ -50,12 +50,19 @@ public abstract class ClaimFix : DocumentFix
     private static bool IsAmong(Place place, string count) =>
         place.Fact("rows") is not { } names || names.Split(',').Contains(count.Substring(0, count.LastIndexOf('.')));
 
+    /// <summary>The claim says "accuracy" unless names say otherwise; a low share that wins is no accuracy.</summary>
     private static string Metric(Place place, ExpressionSyntax number)
     {
-        if (place.Fact("direction") == "lower")
-            return ", metric: \"error rate\"";
-        var words = Vocabulary.Words(NameOf(number) ?? "");
-        return words.Contains("rate") && words.Contains("hit") ? ", metric: \"hit rate\"" : "";
+        var words = Vocabulary.Words(NameOf(number) ?? "").Concat(Vocabulary.Words(place.Fact("score") ?? "")).ToList();
+        if (words.Any(w => w is "accuracy" or "acc" or "accuracies"))
+            return "";
+        if (words.Contains("hit"))
+            return ", metric: \"hit rate\"";
+        if (place.Fact("direction") != "lower")
+            return "";
+        return words.Any(w => w is "error" or "errors" or "err" or "wrong" or "miss" or "lowest" or "least" or "min")
+            ? ", metric: \"error rate\""
+            : ", metric: \"share\"";
     }
 
     private static string? NameOf(ExpressionSyntax expression) => expression switch

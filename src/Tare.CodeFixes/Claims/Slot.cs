@@ -81,9 +81,8 @@ internal sealed class Slot
                 Parts(place, sum.Left, found, depth + 1);
                 Parts(place, sum.Right, found, depth + 1);
                 return;
-            case InvocationExpressionSyntax invocation when place.Model.GetSymbolInfo(invocation, place.Cancel).Symbol is IMethodSymbol
-                { ContainingType.Name: "String", Name: "Format" or "Concat" } or IMethodSymbol { ContainingType.Name: "FormattableString", Name: "Invariant" or "CurrentCulture" }:
-                Arguments(place, invocation.ArgumentList, place.Model.GetSymbolInfo(invocation, place.Cancel).Symbol as IMethodSymbol, found);
+            case InvocationExpressionSyntax invocation when place.Model.GetSymbolInfo(invocation, place.Cancel).Symbol is IMethodSymbol method && MakesText(method):
+                Arguments(place, invocation.ArgumentList, method, found);
                 return;
             case IdentifierNameSyntax name when IsText(place, name) && place.Model.GetSymbolInfo(name, place.Cancel).Symbol is ILocalSymbol local && Initial(local, name) is { } initial:
                 Parts(place, initial, found, depth + 1);
@@ -93,6 +92,13 @@ internal sealed class Slot
         if (Core(place, expression, out bool percent) is { } number)
             found.Add(new Slot(expression, number, percent));
     }
+
+    private static bool MakesText(IMethodSymbol method) => (method.ContainingType.Name, method.Name) switch
+    {
+        ("String", "Format" or "Concat") => true,
+        ("FormattableString", "Invariant" or "CurrentCulture") => true,
+        _ => false,
+    };
 
     private static ExpressionSyntax? Initial(ILocalSymbol local, SyntaxNode use) =>
         local.DeclaringSyntaxReferences.Length == 1 && local.DeclaringSyntaxReferences[0].GetSyntax() is VariableDeclaratorSyntax { Initializer.Value: { } value } declarator

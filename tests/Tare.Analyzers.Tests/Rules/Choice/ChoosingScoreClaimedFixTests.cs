@@ -28,8 +28,8 @@ public class ChoosingScoreClaimedFixTests
     }
 
     [Fact]
-    public Task NotOfferedForALoss() => Mended.OffersNothingAsync(Of("""
-        var best = strengths.Select(s => (s, Loss: Model.Fit(trainX, trainY, s).Loss(validationX, validationY))).MinBy(r => r.Loss);
+    public Task NotOfferedForALoss() => Mended.OffersNothingAsync(Nearest.Of("""
+        var best = new[] { 1, 3, 5 }.Select(s => (s, Loss: NearestBoards.Fit(trainX, trainY, s).Loss(validationX, validationY))).MinBy(r => r.Loss);
         Console.WriteLine(best.Loss);
         """), Rule);
 

@@ -7,11 +7,12 @@ namespace Tare.Analyzers.Tests.Rules.Choice;
 public class WinnerScoreClaimedFixTests
 {
     private const string Rule = "TARE102";
-    private const string Claimed = "Claim.Accuracy(best, testX.Length, earlierLooks: strengths.Length)";
+    private const string Claimed = "Claim.Accuracy(best, testX.Length, earlierLooks: grid.Length)";
 
     private const string Loop = """
+        double[] grid = [0.5, 0.75, 1, 1.25];
         double best = 0, chosen = 0;
-        foreach (double strength in strengths)
+        foreach (double strength in grid)
         {
             double accuracy = Model.Fit(trainX, trainY, strength).Accuracy(testX, testY);
             if (accuracy > best)
@@ -45,17 +46,19 @@ public class WinnerScoreClaimedFixTests
 
     [Theory]
     [InlineData("""
-        var results = new List<(double Strength, double Accuracy)>();
-        foreach (double s in strengths) results.Add((s, Model.Fit(trainX, trainY, s).Accuracy(testX, testY)));
+        int[] grid = [1, 3, 5, 9];
+        var results = new List<(int Strength, double Accuracy)>();
+        foreach (int s in grid) results.Add((s, NearestBoards.Fit(trainX, trainY, s).Accuracy(testX, testY)));
         var best = results.OrderByDescending(r => r.Accuracy).First();
         Console.WriteLine($"{best.Strength}: {best.Accuracy:F3}");
-        """, "{best.Strength}: {Claim.Accuracy(best.Accuracy, testX.Length, earlierLooks: strengths.Length)}")]
+        """, "{best.Strength}: {Claim.Accuracy(best.Accuracy, testX.Length, earlierLooks: grid.Length)}")]
     [InlineData("""
-        var winner = settings.Select(s => new { s.Depth, Share = Model.Fit(trainX, trainY, s.Rate).Accuracy(testX, testY) }).MaxBy(r => r.Share)!;
+        Setting[] tried = [new(1, 0.5), new(2, 0.5), new(3, 1.5)];
+        var winner = tried.Select(s => new { s.Depth, Share = NearestBoards.Fit(trainX, trainY, s.Depth).Accuracy(testX, testY) }).MaxBy(r => r.Share)!;
         Console.WriteLine($"{winner.Depth}: {winner.Share:P0}");
-        """, "{winner.Depth}: {Claim.Accuracy(winner.Share, testX.Length, earlierLooks: settings.Length)}")]
+        """, "{winner.Depth}: {Claim.Accuracy(winner.Share, testX.Length, earlierLooks: tried.Length)}")]
     [InlineData("""
-        double best = new[] { 0.5, 1, 1.5 }.Max(s => Model.Fit(trainX, trainY, s).Accuracy(testX, testY));
+        double best = new[] { 1, 3, 5 }.Max(s => NearestBoards.Fit(trainX, trainY, s).Accuracy(testX, testY));
         Console.WriteLine($"best of 3: {best:F2}");
         """, "best of 3: {Claim.Accuracy(best, testX.Length, earlierLooks: 3)}")]
     [InlineData("""
@@ -76,16 +79,16 @@ public class WinnerScoreClaimedFixTests
         Console.WriteLine($"error {lowest:F3}");
         """, "error {Claim.Accuracy(lowest, testBoards.Count, earlierLooks: 24, metric: \"error rate\")}")]
     public async Task TheShareIsTracedToTheRowsItCounts(string statements, string expected) =>
-        Assert.Contains(expected, await Mended.AllAsync(Of(statements), Rule));
+        Assert.Contains(expected, await Mended.AllAsync(Nearest.Of(statements), Rule));
 
     [Theory]
     // a mean of losses is no count of rows
-    [InlineData("var best = strengths.Select(s => (s, Loss: Model.Fit(trainX, trainY, s).Loss(testX, testY))).MinBy(r => r.Loss); Console.WriteLine(best.Loss);")]
+    [InlineData("var best = new[] { 1, 3, 5 }.Select(s => (s, Loss: NearestBoards.Fit(trainX, trainY, s).Loss(testX, testY))).MinBy(r => r.Loss); Console.WriteLine(best.Loss);")]
     // percent would be taken for a share
-    [InlineData("double best = strengths.Max(s => 100 * Model.Fit(trainX, trainY, s).Accuracy(testX, testY)); Console.WriteLine(best);")]
+    [InlineData("double best = new[] { 1, 3, 5 }.Max(s => 100 * NearestBoards.Fit(trainX, trainY, s).Accuracy(testX, testY)); Console.WriteLine(best);")]
     // a mean of two shares is no share of one set of rows
-    [InlineData("double best = strengths.Max(s => (Model.Fit(trainX, trainY, s).Accuracy(testX, testY) + Model.Fit(trainX, trainY, s / 2).Accuracy(testX, testY)) / 2); Console.WriteLine(best);")]
-    public Task NotOfferedForWhatCannotBeCounted(string statements) => Mended.OffersNothingAsync(Of(statements), Rule);
+    [InlineData("double best = new[] { 1, 3, 5 }.Max(s => (NearestBoards.Fit(trainX, trainY, s).Accuracy(testX, testY) + NearestBoards.Fit(trainX, trainY, s + 2).Accuracy(testX, testY)) / 2); Console.WriteLine(best);")]
+    public Task NotOfferedForWhatCannotBeCounted(string statements) => Mended.OffersNothingAsync(Nearest.Of(statements), Rule);
 
     [Fact]
     public Task NotOfferedWithoutTheLibrary() => Mended.OffersNothingAsync(Of(Loop + "Console.WriteLine(best);") with { Libraries = Libraries.None }, Rule);

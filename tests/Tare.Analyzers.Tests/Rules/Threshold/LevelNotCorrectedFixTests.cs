@@ -1,3 +1,4 @@
+using Microsoft.CodeAnalysis;
 using Tare.Analyzers.Tests.Infrastructure;
 
 namespace Tare.Analyzers.Tests.Rules.Threshold;
@@ -7,7 +8,7 @@ public class LevelNotCorrectedFixTests
 {
     private const string Rule = "TARE201";
 
-    private const string Permutation =
+    internal const string Permutation =
         """
         internal static class Permutation
         {
@@ -158,10 +159,40 @@ public class LevelNotCorrectedFixTests
     }
 
     [Theory]
+    [InlineData(Libraries.None, "< 1 - Math.Pow(1 - 0.05, 1.0 / readings.Length))")]
+    [InlineData(Libraries.Tare, "< Thresholds.Sidak(0.05, readings.Length))")]
+    public async Task SidakWhereTheProjectAsksForIt(Libraries libraries, string expected)
+    {
+        var project = Of(Program("foreach (double[] r in readings) { if (Permutation.PValue(r, warped) < 0.05) Console.WriteLine(r.Length); }"), libraries).ToProject();
+        var found = Assert.Single(await Analysis.FindAsync(project));
+        var asked = Diagnostic.Create(
+            found.Descriptor, found.Location, found.AdditionalLocations, found.Properties.SetItem("tare.correction", "sidak"), found.GetMessage());
+        var mended = await Fixes.ApplyAsync(project, Assert.Single(await Fixes.OfferedAsync(project, asked)));
+        Assert.Contains(expected, await Fixes.TextAsync(mended));
+        Assert.Empty(await Analysis.FindAsync(mended));
+    }
+
+    [Fact]
+    public async Task LinkedDocumentUsesOnlyWhatEveryTargetHas()
+    {
+        string program = Program("foreach (double[] r in readings) { if (Permutation.PValue(r, warped) < 0.05) Console.WriteLine(r.Length); }");
+        var project = Of(program, Libraries.Tare).ToProject();
+        // the same files again, in a target without the runtime library
+        var other = project.Solution.AddProject("Other", "Other", LanguageNames.CSharp).WithMetadataReferences(LibraryReferences.Of(Libraries.None))
+            .WithCompilationOptions(project.CompilationOptions!).WithParseOptions(project.ParseOptions!);
+        foreach (var document in project.Documents)
+            other = other.AddDocument(document.Name, await document.GetTextAsync(), filePath: document.FilePath).Project;
+        project = other.Solution.GetProject(project.Id)!;
+        var finding = Assert.Single(await Analysis.FindAsync(project));
+        var mended = await Fixes.ApplyAsync(project, Assert.Single(await Fixes.OfferedAsync(project, finding)));
+        Assert.Contains("< 0.05 / readings.Length)", await Fixes.TextAsync(mended));
+    }
+
+    [Theory]
     // going through the sequence again would run the tests again
-    [InlineData("IEnumerable<double[]> lazy = readings.Where(r => r.Length > 3); foreach (double[] r in lazy) { if (Permutation.PValue(r, warped) < 0.05) Console.WriteLine(r.Length); }")]
+    [InlineData("foreach (double[] r in streamed) { if (Permutation.PValue(r, warped) < 0.05) Console.WriteLine(r.Length); }")]
     // the list shrinks while it is gone through
-    [InlineData("List<double[]> left = [.. readings]; for (int i = 0; i < left.Count; i++) { if (Permutation.PValue(left[i], warped) > 0.05) left.RemoveAt(i--); }")]
+    [InlineData("for (int i = 0; i < left.Count; i++) { if (Permutation.PValue(left[i], warped) > 0.05) left.RemoveAt(i--); }")]
     // an arm of a switch takes constants only
     [InlineData("foreach (double[] r in readings) Console.WriteLine(Permutation.PValue(r, warped) switch { < 0.05 => \"tells\", _ => \"silent\" });")]
     public Task NotOfferedWhereUnsound(string statement) => Mended.OffersNothingAsync(Of(Program(statement), Libraries.Tare), Rule);
@@ -174,7 +205,7 @@ public class LevelNotCorrectedFixTests
         {
             private const double Alpha = 0.05;
 
-            private static {{returns}} Run(double[][] readings, bool[] warped, double alpha)
+            private static {{returns}} Run(double[][] readings, bool[] warped, double alpha, IEnumerable<double[]> streamed, List<double[]> left)
             {
         {{statements}}
             }
