@@ -63,6 +63,9 @@ internal sealed class HeapObject
     /// <summary>A window that moves with the rows: belongs to one row each time.</summary>
     public bool IsWindow { get; set; }
 
+    /// <summary>Rows that were read alongside when this was computed row by row: labels beside features.</summary>
+    public IdSet Along { get; set; }
+
     /// <summary>Called p-values: its numbers are.</summary>
     public bool HoldsPValues { get; set; }
 

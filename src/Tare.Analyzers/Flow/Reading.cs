@@ -231,7 +231,7 @@ internal sealed class Reading
     {
         var mine = _roles.Of(rows.Id);
         var theirs = _roles.Of(other);
-        return mine.Role == theirs.Role && mine.Role is Role.Test or Role.Validation && theirs.Evidence != Evidence.None;
+        return mine.Role == theirs.Role && mine.Role is Role.Test or Role.Validation && (theirs.Evidence is Evidence.Named or Evidence.Declared || Facts.Rows[other].Parent is not null && theirs.Evidence != Evidence.None);
     }
 
     /// <summary>The score is an average over draws of the rows: cross-validation or repeated splits.</summary>

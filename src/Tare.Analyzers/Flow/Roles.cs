@@ -167,7 +167,7 @@ internal sealed class Roles
             return (Role.Training, Evidence.Known);
         if (rows.Source == Source.Part && IsRealPart(rows) && (scored || SiblingFitted(rows)))
             return (Role.Test, Evidence.Known);
-        if (scored && rows.Parent is null && !HasParts(rows) && ScoredByTraining(rows))
+        if (scored && rows.Source == Source.Loaded && !HasParts(rows) && ScoredByTraining(rows))
             return (Role.Test, Evidence.Known);
         if (rows.Parent is not null)
             return parent.Role is Role.Unknown ? parent : (parent.Role, Evidence.None);

@@ -388,6 +388,7 @@ internal sealed partial class Walker
         o.Own ??= from.Own;
         o.Count ??= from.Count;
         o.SizeVaries = o.SizeVaries.Union(from.SizeVaries);
+        o.Along = o.Along.Union(from.Along);
         o.Content = o.Content.Join(from.Content);
         o.SortKey ??= from.SortKey;
         o.SortPlace ??= from.SortPlace;

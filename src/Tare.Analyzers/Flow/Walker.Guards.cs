@@ -48,6 +48,14 @@ internal sealed partial class Walker
     /// <summary>The condition is about one row at a time: a loop that is running goes through its rows.</summary>
     private bool IsOfOneRow(Value condition)
     {
+        // two quantities over the same rows: candidates are compared, whatever list they were taken from
+        foreach (int id in condition.Compares)
+        {
+            var comparison = _facts.Comparisons[id];
+            if (Tag.At(comparison.Left.Tags, Level.Aggregate).Overlaps(Tag.At(comparison.Right.Tags, Level.Aggregate)))
+                return false;
+        }
+
         foreach (int tag in condition.Tags)
         {
             if (Tag.LevelOf(tag) == Level.Element && IsRunning(Tag.Rows(tag)))

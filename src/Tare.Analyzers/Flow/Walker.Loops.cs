@@ -9,6 +9,8 @@ internal sealed partial class Walker
     private const string Elements = "[]";
     private const string Contents = "()";
 
+    private IdSet _rowsOfLast;
+
     /// <summary>Runs a body as a loop: twice, so that what one round leaves is seen by the next, then closes it.</summary>
     private void Loop(SyntaxNode syntax, IdSet origins, IdSet rows, Action body)
     {
@@ -30,6 +32,7 @@ internal sealed partial class Walker
 
         _loops.RemoveAt(_loops.Count - 1);
         Close(scope);
+        _rowsOfLast = scope.Rows;
     }
 
     /// <summary>Variables that outlive a round differ from round to round.</summary>

@@ -102,6 +102,7 @@ internal sealed partial class Walker
         var rows = o.Rows is null ? IdSet.Empty : IdSet.Of(o.Rows.Id);
         if (!o.IsCollection)
             return rows;
+        rows = rows.Union(o.Along);
         var held = Tag.At(o.Element.Tags, Level.Element);
         if (o.Element.Fields is not null)
         {

@@ -173,6 +173,16 @@ internal sealed partial class Walker
         }
     }
 
+    private void Along(Value mapped, IdSet rows)
+    {
+        foreach (int id in mapped.Objects)
+        {
+            var o = _facts.Objects[id];
+            if (o.Rows is not null || Tag.Has(o.Element.Tags, Level.Element))
+                o.Along = o.Along.Union(rows);
+        }
+    }
+
     private static IdSet Per(HeapObject o) => o.Per.IsEmpty ? o.Own is null ? IdSet.Empty : IdSet.Of(o.Own.Id) : o.Per;
 
     private bool IsSorted(Value source, out Value key)
@@ -206,6 +216,7 @@ internal sealed partial class Walker
             o.Own ??= from.Per.IsEmpty ? OwnOrigin(from) : null;
             o.Count ??= from.Count;
             o.SizeVaries = o.SizeVaries.Union(from.SizeVaries);
+            o.Along = o.Along.Union(from.Along);
             o.Rows ??= from.Rows;
             o.IsWindow = from.IsWindow;
             o.Content = o.Content.Join(from.IsCollection ? from.Content : Value.Empty);
@@ -219,7 +230,9 @@ internal sealed partial class Walker
     private Value Select(Value source, IdSet closures, SyntaxNode syntax, SyntaxNode named, ITypeSymbol type, bool indexed = false)
     {
         var element = indexed ? ElementOf(source, named) is var e ? Indexed(e) : Value.Empty : Map(source, closures, syntax, named);
+        var along = indexed ? IdSet.Empty : _rowsOfLast;
         var mapped = Rebuild(source, element, syntax, type);
+        Along(mapped, along);
         // rows mapped to scores or models are no longer rows; rows mapped to rows or readings still are
         foreach (int id in mapped.Objects)
         {
@@ -303,6 +316,7 @@ internal sealed partial class Walker
     private Value Where(IInvocationOperation invocation, Value source, IdSet closures, SyntaxNode syntax, SyntaxNode named, ITypeSymbol type, int at)
     {
         var condition = Map(source, closures, syntax, named);
+        var along = _rowsOfLast;
         var lambda = Predicate(closures) ?? invocation.Arguments.FirstOrDefault(a => a.Parameter?.Ordinal == at)?.Value.Syntax ?? syntax;
         var (key, other) = PredicateKey(lambda);
         // `Where(r => r.Score == best)`: the choice fell when the extreme was found
@@ -313,6 +327,7 @@ internal sealed partial class Walker
             result = Rebuild(source, ElementOf(source, named), syntax, type);
         else
             result = Slice(source, key, other, Cut.Filter, condition.With(varies: condition.Varies.Except(Origins(source))), syntax, type);
+        Along(result, along);
         foreach (int id in result.Objects)
         {
             var o = _facts.Objects[id];
@@ -526,6 +541,7 @@ internal sealed partial class Walker
     {
         var origins = OriginsOf(source, named, out var rows);
         var key = Map(source, closures, syntax, named);
+        rows = rows.Union(_rowsOfLast);
         var choice = ChoiceByKey(place, origins, key, ChoiceKind.Call, lower, null);
         var element = ElementOf(source, named);
         rows = rows.Where(r => !IsRunning(r));
@@ -568,6 +584,7 @@ internal sealed partial class Walker
             if (all)
                 _needsAll++;
             result = Map(source, closures, syntax, named);
+            rows = rows.Union(_rowsOfLast);
             if (all)
                 _needsAll--;
         }
