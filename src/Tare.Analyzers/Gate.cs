@@ -65,7 +65,7 @@ internal sealed class Gate
             Learn(word, Extreme);
         foreach (string word in new[] { "double", "float", "decimal", "Double", "Single" })
             Learn(word, Real);
-        foreach (string word in new[] { "for", "foreach", "while", "do", "Select", "goto" })
+        foreach (string word in new[] { "for", "foreach", "while", "do", "goto", "Select", "Any", "Count", "Where", "Parallel", "ForEach", "First", "FirstOrDefault", "Find", "FindAll", "from", "if" })
             Learn(word, Loop);
         foreach (string word in new[] { "alpha", "significance", "Alpha", "Significance", "_alpha", "_significance", "significanceLevel", "SignificanceLevel" })
             Learn(word, Level);

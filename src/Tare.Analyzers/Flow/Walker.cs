@@ -105,8 +105,10 @@ internal sealed partial class Walker
         if (RowsTypes.IsRowsLike(type))
         {
             var o = _facts.ObjectAt(syntax, source == Source.Field ? -1 : 0, type, 0);
-            o.IsCollection = true;
-            o.Rows ??= _facts.NewRows(source, null, syntax);
+            o.IsCollection = RowsTypes.IsCollection(type) || type is not INamedTypeSymbol || !RowsTypes.IsRowsLike(type) || type.DeclaringSyntaxReferences.Length == 0;
+            // a list of numbers or settings that a caller hands over is rows only if its name says so
+            if (!IsGrid(type, symbol.Name))
+                o.Rows ??= _facts.NewRows(source, null, syntax);
             Name(o, symbol.Name, symbol, syntax);
             return new Value { Objects = IdSet.Of(o.Id) };
         }
@@ -127,6 +129,14 @@ internal sealed partial class Walker
         }
 
         return traits == Traits.None ? Value.Empty : new Value { Traits = traits };
+    }
+
+    private bool IsGrid(ITypeSymbol type, string name)
+    {
+        if (_vocabulary.RoleOf(name, out _) != Role.Unknown)
+            return false;
+        var element = ElementType(type);
+        return element is not null && (RowsTypes.IsScalar(element) || element.TypeKind is TypeKind.Delegate or TypeKind.Interface || Vocabulary.SaysCandidate(element.Name)) || Vocabulary.SaysCandidate(name);
     }
 
     private bool Enter()

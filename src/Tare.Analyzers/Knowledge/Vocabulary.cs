@@ -136,6 +136,19 @@ internal sealed class Vocabulary
         return words.Count > 0 && words[0] is "fit" or "train" or "learn" or "update" or "step" or "epoch" or "boost" or "grow" or "add" or "partial" or "optimize" or "optimise" or "refit" or "retrain";
     }
 
+    /// <summary>Things to choose among, not rows.</summary>
+    public static bool SaysCandidate(string identifier)
+    {
+        foreach (string word in Words(identifier))
+        {
+            if (word is "setting" or "settings" or "config" or "configs" or "configuration" or "configurations" or "option" or "options" or "candidate" or "candidates"
+                or "parameter" or "parameters" or "grid" or "prompt" or "prompts" or "model" or "models" or "variant" or "variants" or "trainer" or "trainers" or "hyper")
+                return true;
+        }
+
+        return false;
+    }
+
     public static bool SaysSeed(string identifier)
     {
         foreach (string word in Words(identifier))
