@@ -85,11 +85,9 @@ internal sealed class Gate
     private bool Ask(SyntaxTree tree, CancellationToken cancellation)
     {
         int seen = Scan(tree.GetText(cancellation).ToString());
-        if ((seen & Loop) == 0 && (seen & Pick) == 0)
-            return false;
         if ((seen & Split) != 0)
             return true;
-        if ((seen & P) != 0 && (seen & Level) != 0)
+        if ((seen & P) != 0 && (seen & Level) != 0 && (seen & (Loop | Pick | Extreme)) != 0)
             return true;
         if ((seen & Real) != 0)
         {

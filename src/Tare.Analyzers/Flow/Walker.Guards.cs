@@ -152,8 +152,16 @@ internal sealed partial class Walker
                 return null;
         }
 
+        // a loop that reads what another loop stored stands for it: its own variable names the candidate too
+        var wide = family;
+        for (int i = Math.Max(0, depth); i < loops; i++)
+        {
+            if (_loops[i].Origins.Overlaps(family))
+                wide = wide.Union(_loops[i].Origins);
+        }
+
         bool isScore = IsScoreOf(value, left) || IsScoreOf(value, right);
-        if (!straight && !isScore && !value.Varies.Overlaps(family) && !value.Indexed.Overlaps(family) && !value.Indexed.Overlaps(weak) && !value.Varies.Overlaps(weak) && !VariesThroughObjects(value, family.Union(rowFamily)))
+        if (!straight && !isScore && !value.Varies.Overlaps(wide) && !value.Indexed.Overlaps(wide) && !value.Indexed.Overlaps(weak) && !value.Varies.Overlaps(weak) && !VariesThroughObjects(value, family.Union(rowFamily)))
             return null;
         if (Silent)
             return null;

@@ -264,7 +264,7 @@ internal sealed partial class Walker
     private void Bounded(Value condition)
     {
         var scope = _loops[_loops.Count - 1];
-        scope.Bound = scope.Bound.Union(condition.Varies.Except(scope.Origins));
+        scope.Bound = scope.Bound.Union(condition.Varies.Union(condition.Indexed).Except(scope.Origins));
     }
 
     private double? NumberOf(IOperation operation)
