@@ -12,7 +12,7 @@ namespace Tare.Analyzers;
 /// </summary>
 internal sealed class Gate
 {
-    private const int Split = 1, Load = 2, Sink = 4, P = 8, Level = 16, Pick = 32, Real = 64, Slice = 128, RoleName = 256, Loop = 512, Tail = 1024, Extreme = 2048, Best = 4096;
+    private const int Split = 1, Load = 2, Sink = 4, P = 8, Level = 16, Pick = 32, Real = 64, Slice = 128, RoleName = 256, Loop = 512, Tail = 1024, Small = 8192, Extreme = 2048, Best = 4096;
 
     // what a text says hangs on its tree and goes with it; no symbols
     private readonly ConditionalWeakTable<SyntaxTree, StrongBox<bool>> _answers = new();
@@ -65,7 +65,7 @@ internal sealed class Gate
             Learn(word, Extreme);
         foreach (string word in new[] { "double", "float", "decimal", "Double", "Single" })
             Learn(word, Real);
-        foreach (string word in new[] { "for", "foreach", "while", "do", "goto", "Select", "Any", "Count", "Where", "Parallel", "ForEach", "First", "FirstOrDefault", "Find", "FindAll", "from", "if" })
+        foreach (string word in new[] { "for", "foreach", "while", "do", "goto", "Select", "Any", "Count", "Where", "Parallel", "ForEach", "First", "FirstOrDefault", "Find", "FindAll", "from" })
             Learn(word, Loop);
         foreach (string word in new[] { "alpha", "significance", "Alpha", "Significance", "_alpha", "_significance", "significanceLevel", "SignificanceLevel" })
             Learn(word, Level);
@@ -87,7 +87,8 @@ internal sealed class Gate
         int seen = Scan(tree.GetText(cancellation).ToString());
         if ((seen & Split) != 0)
             return true;
-        if ((seen & P) != 0 && (seen & Level) != 0 && (seen & (Loop | Pick | Extreme)) != 0)
+        // an `alpha` is a level beside p-values; beside a distribution it may be its parameter
+        if (((seen & P) != 0 && (seen & Level) != 0 || (seen & Tail) != 0 && (seen & Small) != 0) && (seen & (Loop | Pick | Extreme)) != 0)
             return true;
         if ((seen & Real) != 0)
         {
@@ -109,7 +110,7 @@ internal sealed class Gate
             bool found = node switch
             {
                 ParameterSyntax p => Says(p.Identifier) && MayHoldRows(p.Type),
-                VariableDeclaratorSyntax { Parent: VariableDeclarationSyntax declaration } v => Says(v.Identifier) && (declaration.Type.IsVar ? MayBeRows(v.Initializer?.Value) : MayHoldRows(declaration.Type)),
+                VariableDeclaratorSyntax { Parent: VariableDeclarationSyntax declaration } v => Says(v.Identifier) && (declaration.Type.IsVar ? MayBeRows(v.Initializer?.Value) && IsUsedAsRows(v, tree, cancellation) : MayHoldRows(declaration.Type)),
                 PropertyDeclarationSyntax p => Says(p.Identifier) && MayHoldRows(p.Type),
                 SingleVariableDesignationSyntax d => Says(d.Identifier) && (d.Parent is not DeclarationPatternSyntax pattern || MayHoldRows(pattern.Type)),
                 AttributeSyntax a => a.Name.ToString().EndsWith("Rows", StringComparison.Ordinal),
@@ -134,6 +135,30 @@ internal sealed class Gate
         QualifiedNameSyntax qualified => MayHoldRows(qualified.Right),
         _ => true,
     };
+
+    /// <summary>Members of it are read, it is gone through, or handed to a call that is no function of one number.</summary>
+    private static bool IsUsedAsRows(VariableDeclaratorSyntax declarator, SyntaxTree tree, CancellationToken cancellation)
+    {
+        var scope = declarator.FirstAncestorOrSelf<BaseMethodDeclarationSyntax>() ?? tree.GetRoot(cancellation);
+        foreach (var node in scope.DescendantNodes())
+        {
+            if (node is not IdentifierNameSyntax name || name.Identifier.ValueText != declarator.Identifier.ValueText)
+                continue;
+            bool used = name.Parent switch
+            {
+                MemberAccessExpressionSyntax member => member.Expression == name,
+                ElementAccessExpressionSyntax element => element.Expression == name,
+                CommonForEachStatementSyntax => true,
+                ArgumentSyntax { Parent.Parent: InvocationExpressionSyntax { Expression: MemberAccessExpressionSyntax { Expression: IdentifierNameSyntax { Identifier.ValueText: "Math" or "MathF" or "Complex" } or PredefinedTypeSyntax } } } => false,
+                ArgumentSyntax => true,
+                _ => false,
+            };
+            if (used)
+                return true;
+        }
+
+        return false;
+    }
 
     /// <summary>What a `var` is set to: numbers, comparisons and single elements are no rows.</summary>
     private static bool MayBeRows(ExpressionSyntax? initial) => initial switch
@@ -194,7 +219,7 @@ internal sealed class Gate
                 while (end < text.Length && IsDigit(text[end]))
                     end++;
                 if (IsUsualLevel(text, i + 2, end))
-                    seen |= Level;
+                    seen |= Level | Small;
                 i = end;
                 continue;
             }
@@ -237,7 +262,8 @@ internal sealed class Gate
             bool member = start > 0 && text[start - 1] == '.';
             // `Normal.CDF(` uses a distribution; `double CDF(` makes one. `Math.Max` picks nothing out of a sequence
             if ((flags & Tail) != 0 && member)
-                seen |= P;
+                seen |= Tail;
+            flags &= ~Tail;
             if ((flags & Extreme) != 0 && (!member || start >= 5 && (text[start - 2] == 'h' && text[start - 5] == 'M' || text[start - 2] == 'F')))
                 flags &= ~Extreme;
             seen |= flags;

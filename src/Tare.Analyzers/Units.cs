@@ -50,8 +50,9 @@ internal sealed class Units
             }
         }
 
-        if (trees.Count == 1 && !_gate.MayMatter(tree, cancellation))
-            return Array.Empty<INamedTypeSymbol>();
+        // a document that says nothing itself is spoken of by those that lead to it
+        if (!_gate.MayMatter(tree, cancellation))
+            trees.Remove(tree);
         trees.Sort((a, b) => string.CompareOrdinal(a.FilePath, b.FilePath));
         var types = new List<INamedTypeSymbol>();
         foreach (var t in trees)

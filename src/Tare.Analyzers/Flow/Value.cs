@@ -113,8 +113,20 @@ internal sealed class Value
     /// <summary>Without the members held by value.</summary>
     public Value Flat() => Fields is null ? this : new Value
     {
-        Tags = Tags, Varies = Varies, Indexed = Indexed, Wins = Wins, Sites = Sites, Objects = Objects, Models = Models, Over = Over, Traits = Traits,
-        Closures = Closures, Compares = Compares, Number = Number, CountText = CountText, Label = Label,
+        Tags = Tags,
+        Varies = Varies,
+        Indexed = Indexed,
+        Wins = Wins,
+        Sites = Sites,
+        Objects = Objects,
+        Models = Models,
+        Over = Over,
+        Traits = Traits,
+        Closures = Closures,
+        Compares = Compares,
+        Number = Number,
+        CountText = CountText,
+        Label = Label,
     };
 
     /// <summary>The same data without what it may be called or compared as.</summary>
@@ -122,7 +134,16 @@ internal sealed class Value
         ? this
         : new Value
         {
-            Tags = Tags, Varies = Varies, Indexed = Indexed, Wins = Wins, Sites = Sites, Objects = Objects, Models = Models, Over = Over, Traits = Traits, Fields = Fields,
+            Tags = Tags,
+            Varies = Varies,
+            Indexed = Indexed,
+            Wins = Wins,
+            Sites = Sites,
+            Objects = Objects,
+            Models = Models,
+            Over = Over,
+            Traits = Traits,
+            Fields = Fields,
         };
 
     public Value Join(Value other)
@@ -191,14 +212,40 @@ internal sealed class Value
     /// <summary>Marks the extreme of a family; <paramref name="over"/> is what it was the smallest over.</summary>
     public Value Extremal(IdSet over) => new()
     {
-        Tags = Tags, Varies = Varies, Indexed = Indexed, Wins = Wins, Sites = Sites, Objects = Objects, Models = Models, Over = Over.Union(over), Traits = Traits | Traits.Extreme,
-        Closures = Closures, Compares = Compares, Number = Number, CountText = CountText, Fields = Fields, Label = Label,
+        Tags = Tags,
+        Varies = Varies,
+        Indexed = Indexed,
+        Wins = Wins,
+        Sites = Sites,
+        Objects = Objects,
+        Models = Models,
+        Over = Over.Union(over),
+        Traits = Traits | Traits.Extreme,
+        Closures = Closures,
+        Compares = Compares,
+        Number = Number,
+        CountText = CountText,
+        Fields = Fields,
+        Label = Label,
     };
 
     public Value Labelled(string label) => new()
     {
-        Tags = Tags, Varies = Varies, Indexed = Indexed, Wins = Wins, Sites = Sites, Objects = Objects, Models = Models, Over = Over, Traits = Traits,
-        Closures = Closures, Compares = Compares, Number = Number, CountText = CountText, Fields = Fields, Label = label,
+        Tags = Tags,
+        Varies = Varies,
+        Indexed = Indexed,
+        Wins = Wins,
+        Sites = Sites,
+        Objects = Objects,
+        Models = Models,
+        Over = Over,
+        Traits = Traits,
+        Closures = Closures,
+        Compares = Compares,
+        Number = Number,
+        CountText = CountText,
+        Fields = Fields,
+        Label = label,
     };
 
     public ImmutableDictionary<string, Value> MapFields(Func<Value, Value> map)
@@ -235,8 +282,19 @@ internal sealed class Value
 
     private Value WithoutNumber() => new()
     {
-        Tags = Tags, Varies = Varies, Indexed = Indexed, Wins = Wins, Sites = Sites, Objects = Objects, Models = Models, Over = Over,
-        Closures = Closures, Compares = Compares, Traits = Traits, CountText = CountText, Fields = Fields,
+        Tags = Tags,
+        Varies = Varies,
+        Indexed = Indexed,
+        Wins = Wins,
+        Sites = Sites,
+        Objects = Objects,
+        Models = Models,
+        Over = Over,
+        Closures = Closures,
+        Compares = Compares,
+        Traits = Traits,
+        CountText = CountText,
+        Fields = Fields,
     };
 
     private static ImmutableDictionary<string, Value>? JoinFields(ImmutableDictionary<string, Value>? a, ImmutableDictionary<string, Value>? b)

@@ -211,8 +211,12 @@ internal sealed partial class Walker
 
         return new Value
         {
-            Objects = result, Tags = collection.Tags, Varies = collection.Varies.Union(withinRow ? bounds.Varies : IdSet.Empty), Wins = collection.Wins,
-            Sites = collection.Sites, Indexed = collection.Indexed,
+            Objects = result,
+            Tags = collection.Tags,
+            Varies = collection.Varies.Union(withinRow ? bounds.Varies : IdSet.Empty),
+            Wins = collection.Wins,
+            Sites = collection.Sites,
+            Indexed = collection.Indexed,
         };
     }
 

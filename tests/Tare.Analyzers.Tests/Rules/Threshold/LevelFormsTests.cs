@@ -78,5 +78,6 @@ public class LevelFormsTests
                 {{statements}}
             }
         }
-        """), ("Permutation.cs", Permutation)]) { Libraries = Libraries.Tare };
+        """), ("Permutation.cs", Permutation)])
+    { Libraries = Libraries.Tare };
 }
