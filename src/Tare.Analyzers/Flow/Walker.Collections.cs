@@ -458,12 +458,16 @@ internal sealed partial class Walker
     {
         var rows = RowsThrough(collection, o);
         var moved = index.Varies.Union(index.Indexed);
+        bool through = false;
         for (int i = _loops.Count - 1; i >= 0; i--)
         {
             var scope = _loops[i];
             bool random = index.Has(Traits.Random) && i == _loops.Count - 1;
             // an index computed from data goes where the data says, not where the loop goes
             if (!random && (!index.Tags.IsEmpty || !moved.Overlaps(scope.Origins)))
+                continue;
+            // the innermost loop moves the index; around it only a loop that steps it by hand does so too
+            if (through && !(scope.Syntax is WhileStatementSyntax or DoStatementSyntax))
                 continue;
             if (!rows.IsEmpty && !scope.Rows.ContainsAll(rows))
             {
@@ -474,7 +478,7 @@ internal sealed partial class Walker
 
             if (!o.Per.IsEmpty && !random && !scope.Origins.ContainsAll(o.Per) && !o.Per.Overlaps(RunningOrigins()))
                 scope.Origins = scope.Origins.Union(o.Per);
-            break;
+            through = true;
         }
     }
 

@@ -331,9 +331,10 @@ internal sealed partial class Walker
         foreach (int id in result.Objects)
         {
             var o = _facts.Objects[id];
-            // which rows pass depends on a model, so what is counted of them is a quantity of the model
-            if (Tag.Has(condition.Tags, Level.Aggregate))
-                o.Content = o.Content.Join(condition.With(compares: IdSet.Empty));
+            // which rows pass depends on a model or a setting, so what is counted of them is a quantity of it
+            var kept = condition.With(compares: IdSet.Empty, varies: condition.Varies.Except(Origins(source)));
+            if (Tag.Has(kept.Tags, Level.Aggregate) || Tag.Has(kept.Tags, Level.Element) && !kept.Varies.IsEmpty)
+                o.Content = o.Content.Join(kept);
             o.Count = null;
             foreach (int from in source.Objects)
             {
@@ -608,7 +609,10 @@ internal sealed partial class Walker
         if (closures.Count > 0)
         {
             foreach (int id in source.Objects)
-                result = result.Combine(_facts.Objects[id].Content.With(traits: Traits.None));
+            {
+                if (Tag.Has(_facts.Objects[id].Content.Tags, Level.Aggregate))
+                    result = result.Combine(_facts.Objects[id].Content.With(traits: Traits.None));
+            }
         }
 
         var filtered = CloseValue(result.With(objects: IdSet.Empty), origins, rows, syntax, 2);

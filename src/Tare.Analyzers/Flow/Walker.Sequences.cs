@@ -40,7 +40,7 @@ internal sealed partial class Walker
         foreach (int id in instance.Objects)
         {
             var o = _facts.Objects[id];
-            if (Tag.Has(o.Content.Tags, Level.Aggregate))
+            if (Tag.Has(o.Content.Tags, Level.Aggregate) || !o.Content.Varies.IsEmpty)
                 value = value.Join(CloseValue(o.Content, IdSet.Empty, RowsThrough(instance, o), syntax, id));
         }
 

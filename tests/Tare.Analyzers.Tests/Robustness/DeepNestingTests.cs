@@ -9,7 +9,7 @@ namespace Tare.Analyzers.Tests.Robustness;
 /// </summary>
 public class DeepNestingTests
 {
-    private const int Depth = 10_000;
+    private const int Depth = 1_500;
 
     public static TheoryData<string> Forms =>
     [
