@@ -57,8 +57,8 @@ internal static class Explanation
                 text.AppendLine($"comparison left {Tags(comparison.Left.Tags)} varies {comparison.Left.Varies} right {Tags(comparison.Right.Tags)} varies {comparison.Right.Varies} sites {comparison.Left.Sites}/{comparison.Right.Sites}{Where(comparison.Operation.Syntax)}");
         }
 
-        foreach (var meeting in facts.Meetings.GroupBy(m => (m.Fitted, m.Scored)))
-            text.AppendLine($"model of #{meeting.Key.Fitted} applied to #{meeting.Key.Scored}");
+        foreach (var meeting in facts.Meetings.GroupBy(m => (m.Fitted, m.Scored, m.Stored)))
+            text.AppendLine($"{(meeting.Key.Stored ? "model" : "statistic")} of #{meeting.Key.Fitted} applied to #{meeting.Key.Scored}");
         if (facts.OverBudget)
             text.AppendLine("the budget ran out: nothing is reported here");
         return text.ToString();

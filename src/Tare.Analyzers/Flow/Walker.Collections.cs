@@ -482,6 +482,21 @@ internal sealed partial class Walker
         }
     }
 
+    /// <summary>A waiting list that a hand-stepped loop fills and empties as it goes: in its first round it may yet turn out to go through the rows.</summary>
+    private bool IsQueueOfRunning()
+    {
+        for (int i = 0; i < _loops.Count; i++)
+        {
+            if (_loops[i].IsFirst && _loops[i].Syntax is WhileStatementSyntax or DoStatementSyntax)
+            {
+                _loops[i].Again = true;
+                return true;
+            }
+        }
+
+        return false;
+    }
+
     private static bool IsEdge(IReadOnlyList<IOperation> indices) => indices.Count == 1 && indices[0].Syntax.ToString().Replace(" ", "") is var text
         && (text is "0" or "^1" || text.EndsWith(".Length-1", StringComparison.Ordinal) || text.EndsWith(".Count-1", StringComparison.Ordinal));
 
@@ -522,7 +537,7 @@ internal sealed partial class Walker
         var choice = ChoiceByKey(o.SortPlace ?? syntax, origins, key, self ? ChoiceKind.Extreme : ChoiceKind.Call, o.Descending == last, null);
         var element = ElementOf(o);
         // which one comes first depends on all of them
-        var rows = RowsThrough(collection, o).Where(r => !IsRunning(r));
+        var rows = RowsThrough(collection, o).Where(r => !IsRunning(r) && !IsQueueOfRunning());
         element = CloseValue(element, origins, rows, syntax, 4);
         var order = key.With(tags: Tag.Move(key.Tags, Level.Element, Level.Aggregate, rows.Contains));
         if (Tag.At(key.Tags, Level.Element).Overlaps(rows))
