@@ -16,9 +16,7 @@ internal sealed class Session
 {
     private const int Budget = 30_000;
 
-    private readonly Compilation _compilation;
     private readonly Bodies _bodies;
-    private readonly Gate _gate;
     private readonly Units _units;
     private readonly Catalogue _catalogue;
     private readonly Vocabulary _vocabulary;
@@ -26,15 +24,13 @@ internal sealed class Session
     private readonly ImmutableArray<IRule> _rules = AllRules.Create();
     private readonly ConcurrentDictionary<ISymbol, Lazy<UnitResult>> _results = new(SymbolEqualityComparer.Default);
 
-    public Session(Compilation compilation, Catalogue catalogue, Vocabulary vocabulary, FlowOptions options, CancellationToken cancellation)
+    public Session(Compilation compilation, Settings settings, CancellationToken cancellation)
     {
-        _compilation = compilation;
-        _catalogue = catalogue;
-        _vocabulary = vocabulary;
-        _options = options;
+        _catalogue = settings.Catalogue;
+        _vocabulary = settings.Vocabulary;
+        _options = settings.Options;
         _bodies = new Bodies(compilation, cancellation);
-        _gate = new Gate(vocabulary, catalogue);
-        _units = new Units(compilation, _gate);
+        _units = new Units(compilation, new Gate(_vocabulary, _catalogue));
     }
 
     public IReadOnlyList<Finding> FindingsIn(SemanticModel model, CancellationToken cancellation)

@@ -1,7 +1,6 @@
 using System.Collections.Immutable;
 using Microsoft.CodeAnalysis;
 using Microsoft.CodeAnalysis.Diagnostics;
-using Tare.Analyzers.Flow;
 using Tare.Analyzers.Knowledge;
 using Tare.Analyzers.Rules;
 
@@ -21,7 +20,8 @@ public sealed class TareAnalyzer : DiagnosticAnalyzer
         context.ConfigureGeneratedCodeAnalysis(GeneratedCodeAnalysisFlags.None);
         context.RegisterCompilationStartAction(start =>
         {
-            var session = new Session(start.Compilation, Catalogue.Embedded, Vocabulary.Default, FlowOptions.Default, start.CancellationToken);
+            var settings = Settings.Of(start.Options, start.Compilation, start.CancellationToken);
+            var session = new Session(start.Compilation, settings, start.CancellationToken);
             start.RegisterSemanticModelAction(model =>
             {
                 foreach (var finding in session.FindingsIn(model.SemanticModel, model.CancellationToken))

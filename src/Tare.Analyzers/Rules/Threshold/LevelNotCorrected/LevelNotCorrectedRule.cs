@@ -34,6 +34,7 @@ internal sealed class LevelNotCorrected : IRule
                 .With("k", k is { } value ? Numbers.Plain(value) : null)
                 .With("count", reading.CountText(test.Family))
                 .With("level", k is { } v ? Numbers.Level(Numbers.Corrected(level, v, reading.Options.Sidak)) : null)
+                .With("correction", reading.Options.Sidak ? "sidak" : null)
                 .With("score", test.PName);
             yield return finding.Beside("family", reading.FamilyPlace(test.Family));
         }
