@@ -32,7 +32,8 @@ public class DeepNestingTests
             "conditional" => ("", Repeat(i => $"k == {i} ? score : ") + "score"),
             "calls" => ("", Repeat("Math.Abs(") + "score" + Repeat(")")),
             "blocks" => (Repeat("{") + "score += 1;" + Repeat("}"), "score"),
-            "lambdas" => ("Func<double, object> f = " + Repeat("_ => (Func<double, object>)(") + "x => score" + Repeat(")") + ";", "score"),
+            // The compiler's own look at nullability overflows its stack on more.
+            "lambdas" => ("Func<double, object> f = " + Repeat(i => i < 100 ? "_ => (Func<double, object>)(" : "") + "x => score" + Repeat(i => i < 100 ? ")" : "") + ";", "score"),
             "concatenation" => ("string text = \"\"" + Repeat(" + score.ToString()") + ";", "score"),
             "and" => ("bool all = score > 0" + Repeat(" && score > best") + ";", "score"),
             // The compiler itself overflows its stack on more.
