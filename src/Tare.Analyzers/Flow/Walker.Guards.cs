@@ -177,7 +177,8 @@ internal sealed partial class Walker
         if (straight)
             choice.StraightCount = Math.Max(choice.StraightCount, StraightCount(left.Wins, choice) + StraightCount(right.Wins, choice));
         // "left < right" with left the new score: lower wins; guards that keep the branch out turn it round
-        bool leftIsNew = !left.Varies.IsEmpty && (right.Wins.Contains(choice.Id) || right.Varies.Count <= left.Varies.Count);
+        bool leftKept = IsKept(comparison.Operation, 0, comparison.LoopDepth), rightKept = IsKept(comparison.Operation, 1, comparison.LoopDepth);
+        bool leftIsNew = leftKept != rightKept ? rightKept : !left.Varies.IsEmpty && (right.Wins.Contains(choice.Id) || right.Varies.Count <= left.Varies.Count);
         choice.LowerWins = (comparison.LeftSmaller == leftIsNew) != (guard?.Negated ?? false);
         choice.ScoreName ??= (leftIsNew ? comparison.RightName ?? comparison.LeftName : comparison.LeftName ?? comparison.RightName);
         return choice;
@@ -198,6 +199,27 @@ internal sealed partial class Walker
 
     private static bool IsCandidate(Value value) =>
         !value.Objects.IsEmpty || !value.Tags.IsEmpty || !value.Closures.IsEmpty || value.Fields is not null || value.Has(Traits.Text) || value.Number is null;
+
+    /// <summary>One side of a comparison is a variable that outlives the innermost loop: the best so far.</summary>
+    private bool IsKept(IOperation comparison, int side, int loopDepth)
+    {
+        IOperation? operand = comparison switch
+        {
+            IBinaryOperation binary => side == 0 ? binary.LeftOperand : binary.RightOperand,
+            _ => null,
+        };
+        while (operand is IConversionOperation or IParenthesizedOperation)
+            operand = operand is IConversionOperation conversion ? conversion.Operand : ((IParenthesizedOperation)operand).Operand;
+        return operand switch
+        {
+            ILocalReferenceOperation local => _declaredAt.TryGetValue(local.Local, out int depth) && depth < loopDepth,
+            IParameterReferenceOperation parameter => _declaredAt.TryGetValue(parameter.Parameter, out int depth) && depth < loopDepth,
+            IFieldReferenceOperation { Instance: ILocalReferenceOperation owner } => _declaredAt.TryGetValue(owner.Local, out int depth) && depth < loopDepth,
+            IPropertyReferenceOperation { Instance: ILocalReferenceOperation owner } => _declaredAt.TryGetValue(owner.Local, out int depth) && depth < loopDepth,
+            IFieldReferenceOperation or IPropertyReferenceOperation => true,
+            _ => false,
+        };
+    }
 
     private static bool IsScoreOf(Value value, Value score) =>
         !score.Sites.IsEmpty && value.Fields is null && value.Objects.IsEmpty && value.Sites.Equals(score.Sites) && value.Tags.Equals(score.Tags);

@@ -26,10 +26,13 @@ internal sealed class ChosenOnTestRows : IRule
             double? k = reading.SizeOf(choice, rows.Family);
             string what = choice.ScoreName is { } name ? $"'{name}' is" : "The winner is taken by";
             string extreme = choice.LowerWins ? "lowest" : "highest";
+            string scores = k is null
+                ? $"score of {ChoiceFacts.Candidates(reading, choice, rows.Family)}"
+                : $"of {ChoiceFacts.Candidates(reading, choice, rows.Family)} scores";
             string message =
-                $"{what} the {extreme} of {ChoiceFacts.Candidates(reading, choice, rows.Family)}{(k is null ? "'s" : "")} scores on test rows '{Reading.NameOf(rows.Rows)}', so it flatters the winner. "
+                $"{what} the {extreme} {scores} on test rows '{Reading.NameOf(rows.Rows)}', so it flatters the winner. "
                 + $"{ChoiceFacts.Odds(reading, k)} Choose on validation rows, or {ChoiceFacts.Requirement(reading, k)}.";
-            var finding = new Finding(Rule, place, message.Replace("''s", "'s").Replace("candidates's", "candidates'"));
+            var finding = new Finding(Rule, place, message);
             ChoiceFacts.Describe(finding, reading, choice, rows);
             yield return finding.Beside("helper", helper);
         }
