@@ -79,9 +79,6 @@ internal sealed class Gate
         return _answers.GetValue(tree, _ => new StrongBox<bool>(answer)).Value;
     }
 
-    /// <summary>Which groups of words a text holds, for looking into why a document is let through.</summary>
-    internal string Describe(SyntaxTree tree) => System.Convert.ToString(Scan(tree.GetText().ToString()), 2);
-
     private bool Ask(SyntaxTree tree, CancellationToken cancellation)
     {
         int seen = Scan(tree.GetText(cancellation).ToString());

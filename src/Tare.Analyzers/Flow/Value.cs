@@ -33,7 +33,7 @@ internal enum Traits
 }
 
 /// <summary>What is known of one value. Immutable; <see cref="Join"/> gives what holds on either path.</summary>
-internal sealed class Value
+internal sealed record Value
 {
     private const int MostSites = 32;
     private const int MostTags = 64;
@@ -91,7 +91,7 @@ internal sealed class Value
     public Value With(
         IdSet? tags = null, IdSet? varies = null, IdSet? indexed = null, IdSet? wins = null, IdSet? sites = null, IdSet? objects = null,
         IdSet? models = null, IdSet? closures = null, IdSet? compares = null, Traits? traits = null, ImmutableDictionary<string, Value>? fields = null) =>
-        new()
+        this with
         {
             Tags = tags ?? Tags,
             Varies = varies ?? Varies,
@@ -103,48 +103,16 @@ internal sealed class Value
             Closures = closures ?? Closures,
             Compares = compares ?? Compares,
             Traits = traits ?? Traits,
-            Number = Number,
-            CountText = CountText,
-            Label = Label,
-            Over = Over,
             Fields = fields ?? Fields,
         };
 
     /// <summary>Without the members held by value.</summary>
-    public Value Flat() => Fields is null ? this : new Value
-    {
-        Tags = Tags,
-        Varies = Varies,
-        Indexed = Indexed,
-        Wins = Wins,
-        Sites = Sites,
-        Objects = Objects,
-        Models = Models,
-        Over = Over,
-        Traits = Traits,
-        Closures = Closures,
-        Compares = Compares,
-        Number = Number,
-        CountText = CountText,
-        Label = Label,
-    };
+    public Value Flat() => Fields is null ? this : this with { Fields = null };
 
     /// <summary>The same data without what it may be called or compared as.</summary>
     public Value Data() => Closures.IsEmpty && Compares.IsEmpty && Number is null && CountText is null
         ? this
-        : new Value
-        {
-            Tags = Tags,
-            Varies = Varies,
-            Indexed = Indexed,
-            Wins = Wins,
-            Sites = Sites,
-            Objects = Objects,
-            Models = Models,
-            Over = Over,
-            Traits = Traits,
-            Fields = Fields,
-        };
+        : this with { Closures = IdSet.Empty, Compares = IdSet.Empty, Number = null, CountText = null, Label = null };
 
     public Value Join(Value other)
     {
@@ -210,43 +178,9 @@ internal sealed class Value
     public Value Tagged(IdSet tags) => Tags.ContainsAll(tags) ? this : With(tags: Tags.Union(tags));
 
     /// <summary>Marks the extreme of a family; <paramref name="over"/> is what it was the smallest over.</summary>
-    public Value Extremal(IdSet over) => new()
-    {
-        Tags = Tags,
-        Varies = Varies,
-        Indexed = Indexed,
-        Wins = Wins,
-        Sites = Sites,
-        Objects = Objects,
-        Models = Models,
-        Over = Over.Union(over),
-        Traits = Traits | Traits.Extreme,
-        Closures = Closures,
-        Compares = Compares,
-        Number = Number,
-        CountText = CountText,
-        Fields = Fields,
-        Label = Label,
-    };
+    public Value Extremal(IdSet over) => this with { Over = Over.Union(over), Traits = Traits | Traits.Extreme };
 
-    public Value Labelled(string label) => new()
-    {
-        Tags = Tags,
-        Varies = Varies,
-        Indexed = Indexed,
-        Wins = Wins,
-        Sites = Sites,
-        Objects = Objects,
-        Models = Models,
-        Over = Over,
-        Traits = Traits,
-        Closures = Closures,
-        Compares = Compares,
-        Number = Number,
-        CountText = CountText,
-        Fields = Fields,
-        Label = label,
-    };
+    public Value Labelled(string label) => this with { Label = label };
 
     public ImmutableDictionary<string, Value> MapFields(Func<Value, Value> map)
     {
@@ -280,22 +214,7 @@ internal sealed class Value
         return true;
     }
 
-    private Value WithoutNumber() => new()
-    {
-        Tags = Tags,
-        Varies = Varies,
-        Indexed = Indexed,
-        Wins = Wins,
-        Sites = Sites,
-        Objects = Objects,
-        Models = Models,
-        Over = Over,
-        Closures = Closures,
-        Compares = Compares,
-        Traits = Traits,
-        CountText = CountText,
-        Fields = Fields,
-    };
+    private Value WithoutNumber() => this with { Number = null, Label = null };
 
     private static ImmutableDictionary<string, Value>? JoinFields(ImmutableDictionary<string, Value>? a, ImmutableDictionary<string, Value>? b)
     {

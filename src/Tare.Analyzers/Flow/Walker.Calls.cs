@@ -212,7 +212,6 @@ internal sealed partial class Walker
             _state.Set(parameter, value);
         }
 
-        var silentConditionals = _initialised.Count;
         _frame = frame;
         foreach (var part in body)
         {
@@ -482,7 +481,7 @@ internal sealed partial class Walker
         var given = Value.Empty;
         foreach (var a in arguments)
             given = given.Combine(Deep(a));
-        bool learns = method.ReturnsVoid || Vocabulary.SaysLearn(method.Name) && !IsFluent(method);
+        bool learns = method.ReturnsVoid || Vocabulary.SaysLearn(method.Name);
         if (learns && !given.IsEmpty)
         {
             var learned = given.With(tags: Tag.Move(given.Tags, Level.Whole, Level.Aggregate), sites: IdSet.Empty);
@@ -510,8 +509,6 @@ internal sealed partial class Walker
 
         return RoleOfResult(NamedTraits(result, method.Name, method.ReturnType), method, syntax);
     }
-
-    private static bool IsFluent(IMethodSymbol method) => false;
 
     /// <summary>`net.save("best.dat")` under a comparison keeps a candidate outside the program's variables.</summary>
     private void KeptBy(string name, Value instance, Value given, SyntaxNode syntax)

@@ -100,7 +100,7 @@ internal sealed partial class Walker
             case CatalogueEffect.Fits:
                 return Fit(entry, method!, instance, arguments, syntax, type);
             case CatalogueEffect.Scores:
-                return Typed(Gather(instance, arguments), type, syntax, Value.Empty) is var score && RowsTypes.IsScalar(type) ? score : score;
+                return Typed(Gather(instance, arguments), type, syntax, Value.Empty);
             case CatalogueEffect.Metric:
                 return Opaque(instance, type, syntax);
             case CatalogueEffect.PValue:
